@@ -1,0 +1,168 @@
+"""What to buy for a separator, and how its pieces go together."""
+
+from __future__ import annotations
+
+from math import ceil, pi
+from typing import TYPE_CHECKING
+
+from gyrecut.kit.contents import Hardware
+from gyrecut.proportions.dimensions import BellMouth
+
+if TYPE_CHECKING:
+    from collections.abc import Iterator
+
+    from gyrecut.catalogue.rows import Fastener
+    from gyrecut.proportions.dimensions import Dimensions
+
+SCREW_LENGTHS_MM = (6, 8, 10, 12, 16, 20, 25, 30, 35, 40, 45, 50)  # preferred, ISO 4762 lists
+BIN_LID_MM = 4.0  # thickness of a pail lid or drum head with a washer: common practice, no source
+SPARE_MM = 1.0
+GLUE_GAP_SPARE = 1.5  # what squeezes out: common practice, no source
+
+
+def hardware(d: Dimensions, fastener: Fastener, *, copies: int) -> Iterator[Hardware]:
+    """List what one stage needs besides its printed pieces.
+
+    Parameters
+    ----------
+    d : Dimensions
+        Of one separator of the stage.
+    fastener : Fastener
+        Its screws.
+    copies : int
+        How many equal separators the stage has.
+
+    Yields
+    ------
+    Hardware
+    """
+    lid, portal, ring = d.rim.screws, d.portal.screws, d.bin_ring.screws
+    in_lid, in_portal = len(lid.places_mm) * copies, len(portal.places_mm) * copies
+    yield Hardware(
+        what=f"{lid.thread} heat-set insert, hole {lid.insert_hole_mm:g} mm",
+        quantity=str(in_lid + in_portal),
+        where="rim and portal of the body",
+    )
+    yield Hardware(
+        what=f"{lid.thread} x {_screw_into_insert(d.lid.thickness_mm, lid.insert_depth_mm)} screw "
+        "and washer",
+        quantity=str(in_lid),
+        where="lid",
+    )
+    flange = d.transition.flange_thickness_mm
+    yield Hardware(
+        what=f"{portal.thread} x {_screw_into_insert(flange, portal.insert_depth_mm)} screw "
+        "and washer",
+        quantity=str(in_portal),
+        where="transition",
+    )
+    through = d.bin_ring.thickness_mm + BIN_LID_MM + fastener.nut_height * 1000
+    yield Hardware(
+        what=f"{ring.thread} x {_shortest_screw(through)} screw, nut and two washers",
+        quantity=str(len(ring.places_mm) * copies),
+        where="bin ring, through the bin's lid",
+    )
+    yield Hardware(
+        what="flat gasket, closed-cell foam 3 mm",
+        quantity=f"{_gasket_cm2(d) * copies:.0f} cm2",
+        where="under the lid, behind the transition, under the bin ring",
+    )
+    yield Hardware(
+        what="epoxy glue for the printed polymer",
+        quantity=f"{max(5.0, ceil(_glue_cm3(d) * copies)):.0f} cm3",
+        where="ring joints, sector laps, finder and outlet",
+    )
+
+
+def steps(d: Dimensions, *, copies: int) -> Iterator[str]:
+    """Say in what order the pieces of one separator go together, a step a sentence."""
+    division, screws = d.division, d.rim.screws
+    if copies > 1:
+        yield f"Make {copies} of these separators, each the same way."
+    if any(ring.sectors > 1 for ring in division.rings):
+        yield (
+            "Glue the sectors of each body ring into a ring: half of the wall of one laps over "
+            "half of the wall of the next, the inner faces flush; strap it round until it is hard."
+        )
+    if division.lid_sectors > 1:
+        yield (
+            "Glue the sectors of the lid on a flat board covered with film, tongue into groove, "
+            "and weigh them down until they are hard."
+        )
+    yield (
+        f"Press a {screws.thread} heat-set insert into each of the {len(screws.places_mm)} holes "
+        f"in the rim and the {len(d.portal.screws.places_mm)} holes in the portal, flush with "
+        "the face."
+    )
+    if len(division.rings) > 1:
+        yield (
+            "Glue the body rings together from the top down, each ring's plain end into the "
+            "socket of the next until it stands on the seat; wipe the inside smooth before the "
+            "glue is hard."
+        )
+    yield "Glue the foot of the cone into the socket of the bin ring."
+    yield (
+        "Brush the inside of body, transition and lid with epoxy or varnish, since layered walls "
+        "leak; keep it off the faces that take gaskets."
+    )
+    yield (
+        "Put the finder through the lid from above and glue its collar down all round; the round "
+        "lip hangs below."
+    )
+    if isinstance(d.outlet, BellMouth):
+        yield "Plug the bell-mouth into the finder's upper end, rounded side first, and glue it."
+    else:
+        yield "Glue the outlet's socket over the finder's upper end."
+    yield (
+        "Lay a gasket on the rim, cut out for barrel and slot, lay the lid on it and draw its "
+        "screws up crosswise; they come from above."
+    )
+    yield (
+        "Lay a gasket round the mouth and screw the transition to the portal; the screws stand "
+        "beside the duct, a driver passes the cuff."
+    )
+    yield (
+        f"Cut a hole of {d.bin_ring.bore_mm:.0f} mm into the bin's lid, drill it through the "
+        "ring's holes, and screw the ring down on a gasket."
+    )
+    yield (
+        "Close hose and outlet, draw a little suction and listen at every joint; any leak at the "
+        "bin spoils the catch."
+    )
+
+
+def _screw_into_insert(plate_mm: float, hole_mm: float) -> int:
+    """Longest standard screw that does not reach the bottom of the insert's hole."""
+    return max(
+        (length for length in SCREW_LENGTHS_MM if length <= plate_mm + hole_mm - SPARE_MM),
+        default=SCREW_LENGTHS_MM[0],
+    )
+
+
+def _shortest_screw(grip_mm: float) -> int:
+    return next(
+        (length for length in SCREW_LENGTHS_MM if length >= grip_mm + SPARE_MM),
+        SCREW_LENGTHS_MM[-1],
+    )
+
+
+def _gasket_cm2(d: Dimensions) -> float:
+    portal, ring = d.portal, d.bin_ring
+    disc = pi * d.rim.outer_radius_mm**2
+    tab = -portal.face_x_mm * (portal.frame_high_y_mm - portal.frame_low_y_mm)
+    frame = (portal.frame_high_y_mm - portal.frame_low_y_mm) * -portal.frame_bottom_z_mm
+    foot = pi * (ring.outer_radius_mm**2 - ring.bore_mm**2 / 4)
+    return (disc + tab + frame + foot) / 100
+
+
+def _glue_cm3(d: Dimensions) -> float:
+    joint, division = d.joint, d.division
+    laps = sum(
+        2 * pi * d.body.outside_radius_at(height) * joint.lap_mm
+        for height in (*division.cut_heights_mm, -d.body.total_height_mm)
+    )
+    seams = sum(
+        ring.sectors * ring.height_mm * joint.lap_mm for ring in division.rings if ring.sectors > 1
+    )
+    collar = pi * (d.finder.collar_radius_mm**2 - d.finder.outer_radius_mm**2)
+    return (laps + seams + collar) * joint.clearance_mm * GLUE_GAP_SPARE / 1000

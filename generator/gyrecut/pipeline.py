@@ -1,0 +1,273 @@
+"""From profile to kit: each stage of the work is called here once, in the order it happens."""
+
+from __future__ import annotations
+
+import json
+from dataclasses import dataclass
+from math import pi
+from typing import TYPE_CHECKING, Any
+
+from gyrecut import __version__
+from gyrecut.airflow.air import air_state
+from gyrecut.catalogue import fasteners, polymers
+from gyrecut.kit.assembly import hardware, steps
+from gyrecut.kit.contents import KitContents, Polymer
+from gyrecut.kit.facts import body_facts, estimate_facts
+from gyrecut.kit.folder import MANIFEST
+from gyrecut.kit.manifest import plain
+from gyrecut.profile.dust import dust_of
+from gyrecut.profile.models import profile_hash
+from gyrecut.proportions.proportioning import bed_of, geometry_of, proportion
+from gyrecut.proportions.rules import geometry_rules
+from gyrecut.separation.limits import Totals, limit_findings
+from gyrecut.separation.prediction import first_prediction
+
+if TYPE_CHECKING:
+    from collections.abc import Callable, Iterator
+    from pathlib import Path
+
+    from gyrecut.airflow.air import AirState
+    from gyrecut.catalogue.rows import Dust
+    from gyrecut.correlations.geometry import CycloneGeometry
+    from gyrecut.findings import Finding
+    from gyrecut.kit.contents import KitPiece
+    from gyrecut.profile import Profile
+    from gyrecut.proportions.dimensions import Dimensions
+    from gyrecut.separation.prediction import FirstPrediction
+
+    Progress = Callable[[str, int, int], None]
+
+MM = 1000.0
+FIXED_PIECES = 4  # finder, outlet, transition, bin ring
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class StageDesign:
+    """One separation step: the dimensions of one of its separators, and what it should do."""
+
+    number: int
+    copies: int
+    flow: float
+    dimensions: Dimensions
+    geometry: CycloneGeometry
+    prediction: FirstPrediction
+
+    @property
+    def piece_count(self) -> int:
+        """Printed objects of the stage, copies counted."""
+        return self.copies * (self.dimensions.division.piece_count + FIXED_PIECES)
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Design:
+    """All that can be said before a solid is made."""
+
+    profile: Profile
+    air: AirState
+    dust: Dust
+    stages: tuple[StageDesign, ...]
+    findings: tuple[Finding, ...]
+
+    def as_document(self) -> dict[str, Any]:
+        """Give the design as data that JSON has words for."""
+        return {
+            "gyrecut": __version__,
+            "profile": {"name": self.profile.name, "hash": profile_hash(self.profile)},
+            "air": plain(self.air),
+            "dust": plain(self.dust),
+            "stages": [
+                {
+                    "number": stage.number,
+                    "copies": stage.copies,
+                    "flow": stage.flow,
+                    "dimensions": plain(stage.dimensions),
+                    "prediction": plain(stage.prediction),
+                }
+                for stage in self.stages
+            ],
+            "findings": plain(self.findings),
+        }
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class BuildResult:
+    """A kit on disk."""
+
+    folder: Path
+    findings: tuple[Finding, ...]
+    manifest: dict[str, Any]
+
+
+def design(profile: Profile) -> Design:
+    """Work a profile out as far as it goes without CAD.
+
+    Parameters
+    ----------
+    profile : Profile
+
+    Returns
+    -------
+    Design
+
+    Raises
+    ------
+    UnbuildableError, OutOfRangeError
+        Where no separator can be made from the profile.
+    """
+    air = air_state(
+        profile.air.temperature,
+        altitude=profile.air.altitude,
+        relative_humidity=profile.air.relative_humidity,
+    )
+    dust = dust_of(profile.dust)
+    stages: list[StageDesign] = []
+    findings: list[Finding] = []
+    for number, stage in enumerate(profile.stages, start=1):
+        flow = profile.air.flow / stage.count
+        dimensions = proportion(profile, stage, air=air, dust=dust)
+        geometry = geometry_of(dimensions)
+        prediction = first_prediction(
+            geometry,
+            flow=flow,
+            air=air,
+            particle_density=dust.particle_density,
+            median=dust.median,
+            spread=dust.spread,
+        )
+        feed = profile.dust.feed
+        findings += geometry_rules(
+            dimensions,
+            geometry,
+            flow=flow,
+            air=air,
+            dust=dust,
+            feed=None if feed is None else feed / stage.count,
+            hose_flow=flow,
+        )
+        stages.append(
+            StageDesign(
+                number=number,
+                copies=stage.count,
+                flow=flow,
+                dimensions=dimensions,
+                geometry=geometry,
+                prediction=prediction,
+            )
+        )
+    findings += limit_findings(profile.limits, _totals(profile, stages))
+    return Design(
+        profile=profile, air=air, dust=dust, stages=tuple(stages), findings=tuple(findings)
+    )
+
+
+def _totals(profile: Profile, stages: list[StageDesign]) -> Totals:
+    bin_height = profile.bin.volume / (pi / 4 * profile.bin.mouth**2)
+    return Totals(
+        pressure_drop=sum(stage.prediction.pressure_drop_shepherd_lapple for stage in stages),
+        height=bin_height + max(stage.dimensions.overall_height_mm for stage in stages) / MM,
+        cut_size=min(stage.prediction.cut_size_lapple for stage in stages),
+        pieces=sum(stage.piece_count for stage in stages),
+    )
+
+
+def build(design: Design, folder: Path, progress: Progress) -> BuildResult:
+    """Make the solids, cut them, check the pieces and write the kit.
+
+    Parameters
+    ----------
+    design : Design
+    folder : Path
+        Where the kit is to stand.
+    progress : callable
+        Told (what, done, total) as the work goes on.
+
+    Returns
+    -------
+    BuildResult
+
+    Raises
+    ------
+    BuildError
+        Where the kernel or a file does not give what the design asks for.
+    """
+    from gyrecut.checks import findings_of, limits_of, measure_mesh  # noqa: PLC0415 - CAD and meshes load here
+    from gyrecut.kit.writing import write_kit  # noqa: PLC0415 - same
+
+    pieces = tuple(_pieces(design, progress))
+    limits = limits_of(design.profile.printer)
+    findings = list(design.findings)
+    for done, piece in enumerate(pieces, start=1):
+        findings += findings_of(measure_mesh(piece.mesh, limits), piece.name, limits)
+        progress("checks", done, len(pieces))
+    progress("files", 0, 1)
+    written = write_kit(_contents(design, pieces, tuple(findings)), folder)
+    progress("files", 1, 1)
+    manifest: dict[str, Any] = json.loads((written / MANIFEST).read_bytes())
+    return BuildResult(folder=written, findings=tuple(findings), manifest=manifest)
+
+
+def _pieces(design: Design, progress: Progress) -> Iterator[KitPiece]:
+    from gyrecut.kit.measuring import kit_piece  # noqa: PLC0415 - CAD loads here
+    from gyrecut.pieces import make_pieces  # noqa: PLC0415 - same
+    from gyrecut.solids import make_parts  # noqa: PLC0415 - same
+
+    density = polymers()[design.profile.material].density
+    bed = bed_of(design.profile)
+    several = len(design.stages) > 1
+    total = sum(stage.piece_count // stage.copies for stage in design.stages)
+    done = 0
+    for stage in design.stages:
+        progress("solids", stage.number - 1, len(design.stages))
+        parts = make_parts(stage.dimensions)
+        progress("solids", stage.number, len(design.stages))
+        prefix = f"stage-{stage.number}-" if several else ""
+        for piece in make_pieces(
+            parts, stage.dimensions, bed, prefix=prefix, copies=stage.copies
+        ):
+            yield kit_piece(piece, density=density, stage=stage.number)
+            done += 1
+            progress("pieces", done, total)
+
+
+def _contents(
+    design: Design, pieces: tuple[KitPiece, ...], findings: tuple[Finding, ...]
+) -> KitContents:
+    profile = design.profile
+    polymer = polymers()[profile.material]
+    fastener = fasteners()[profile.joints.fastener]
+    several = len(design.stages) > 1
+    return KitContents(
+        version=__version__,
+        profile_name=profile.name,
+        profile_hash=profile_hash(profile),
+        polymer=Polymer(
+            name=polymer.name,
+            density=polymer.density,
+            softening_temperature=polymer.softening_temperature,
+        ),
+        dust_is_combustible=design.dust.combustible,
+        dimensions=[stage.dimensions for stage in design.stages],
+        prediction=[stage.prediction for stage in design.stages],
+        body=tuple(
+            fact for stage in design.stages for fact in body_facts(stage.dimensions, _of(stage, several))
+        ),
+        estimate=tuple(
+            fact
+            for stage in design.stages
+            for fact in estimate_facts(stage.prediction, _of(stage, several))
+        ),
+        findings=findings,
+        pieces=pieces,
+        hardware=tuple(
+            item
+            for stage in design.stages
+            for item in hardware(stage.dimensions, fastener, copies=stage.copies)
+        ),
+        steps=tuple(
+            step for stage in design.stages for step in steps(stage.dimensions, copies=stage.copies)
+        ),
+    )
+
+
+def _of(stage: StageDesign, several: bool) -> str:  # noqa: FBT001 - one plain question
+    return f"stage {stage.number}" if several else ""

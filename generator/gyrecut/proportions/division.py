@@ -1,0 +1,271 @@
+"""How the body and the lid divide for the printer: heights, sectors, angles. No CAD here."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from math import atan2, ceil, cos, degrees, hypot, inf, pi, tan
+from typing import TYPE_CHECKING
+
+import numpy as np
+
+from gyrecut.errors import UnbuildableError
+from gyrecut.proportions.dimensions import Division, Ring, keel_bottom
+
+if TYPE_CHECKING:
+    from numpy.typing import NDArray
+
+    from gyrecut.proportions.dimensions import Body, Joint, Portal, Rim
+
+MOST_SECTORS = 12
+ARC_STEPS = 24
+TURNS = np.deg2rad(np.arange(0.0, 180.0, 1.0))
+SPARE_MM = 0.5
+KEEL_LAND_MM = 2.0  # width the cut keel stands on
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Bed:
+    """What the printer leaves for one piece: its build volume less the margins."""
+
+    width_mm: float
+    depth_mm: float
+    height_mm: float
+
+
+def best_turn(outline_mm: NDArray[np.float64], bed: Bed) -> tuple[float, bool]:
+    """Find the turn about the vertical at which an outline fits the bed best.
+
+    Parameters
+    ----------
+    outline_mm : (n, 2) float
+        Points whose convex hull is the piece seen from above [mm].
+    bed : Bed
+        What the printer leaves.
+
+    Returns
+    -------
+    tuple of (float, bool)
+        The turn [rad] that leaves most room, and whether it fits there.
+    """
+    turned_x = np.outer(np.cos(TURNS), outline_mm[:, 0]) - np.outer(
+        np.sin(TURNS), outline_mm[:, 1]
+    )
+    turned_y = np.outer(np.sin(TURNS), outline_mm[:, 0]) + np.outer(
+        np.cos(TURNS), outline_mm[:, 1]
+    )
+    fill = np.maximum(np.ptp(turned_x, axis=1) / bed.width_mm, np.ptp(turned_y, axis=1) / bed.depth_mm)
+    best = int(np.argmin(fill))
+    return float(TURNS[best]), bool(fill[best] <= 1.0)
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class _Plan:
+    """A ring or plate seen from above: its outer circle, and what stands out of it."""
+
+    radius_mm: float
+    corners_mm: tuple[tuple[float, float], ...]
+    keep_whole: tuple[float, float] | None
+    obstacles: tuple[float, ...]
+    obstacle_mm: float
+    lap_mm: float
+
+
+def _sectors(plan: _Plan, bed: Bed, stagger: float) -> tuple[int, float] | None:
+    """Fewest equal sectors that fit, and the angle of the first cut; None where none do."""
+    for count in range(1, MOST_SECTORS + 1):
+        if count == 1:
+            if best_turn(_outline(plan, 0.0, 2 * pi), bed)[1]:
+                return 1, 0.0
+            continue
+        first = _first_cut(plan, count, stagger)
+        if first is None:
+            continue
+        step = 2 * pi / count
+        half_lap = plan.lap_mm / 2 / plan.radius_mm
+        if all(
+            best_turn(
+                _outline(plan, first + k * step - half_lap, first + (k + 1) * step + half_lap), bed
+            )[1]
+            for k in range(count)
+        ):
+            return count, first
+    return None
+
+
+def _outline(plan: _Plan, start: float, end: float) -> NDArray[np.float64]:
+    """Points round one sector: its arc, the inner ends, and the corners that lie in it."""
+    angles = np.linspace(start, end, ARC_STEPS)
+    arc = plan.radius_mm * np.column_stack((np.cos(angles), np.sin(angles)))
+    corners = [
+        corner
+        for corner in plan.corners_mm
+        if (atan2(corner[1], corner[0]) - start) % (2 * pi) <= end - start
+    ]
+    inner = 0.5 * arc[[0, -1]]
+    return np.vstack((arc, inner, *(np.array([corner]) for corner in corners)))
+
+
+def _first_cut(plan: _Plan, count: int, stagger: float) -> float | None:
+    """Angle of the first cut: clear of slot and screws, nearest to `stagger` among the best."""
+    step = 2 * pi / count
+    trials = stagger + np.linspace(0.0, step, 181)[:-1]
+    cuts = trials[:, None] + step * np.arange(count)
+    reach = (plan.lap_mm / 2 + SPARE_MM) / plan.radius_mm
+    good = np.ones(trials.shape, dtype=bool)
+    if plan.keep_whole is not None:
+        low, high = plan.keep_whole
+        inside = (cuts - (low - reach)) % (2 * pi) <= (high - low) + 2 * reach
+        good &= ~inside.any(axis=1)
+    if plan.obstacles:
+        away = (cuts[:, :, None] - np.array(plan.obstacles) + pi) % (2 * pi) - pi
+        nearest = np.abs(away).min(axis=(1, 2))
+        good &= nearest >= reach + plan.obstacle_mm / 2 / plan.radius_mm
+    chosen = np.flatnonzero(good)
+    return float(trials[chosen[0]] % (2 * pi)) if chosen.size else None
+
+
+def slot_arc(body: Body, portal: Portal) -> tuple[float, float]:
+    """Angles [rad] between which slot and portal stand out of the barrel."""
+    low_y = portal.frame_low_y_mm
+    return (
+        atan2(portal.frame_high_y_mm, 0.0) - SPARE_MM / body.radius_mm,
+        atan2(low_y, portal.face_x_mm) % (2 * pi),
+    )
+
+
+def _top_plan(body: Body, portal: Portal, rim: Rim, joint: Joint) -> _Plan:
+    x, low, high = portal.face_x_mm, portal.frame_low_y_mm, portal.frame_high_y_mm
+    return _Plan(
+        radius_mm=rim.outer_radius_mm,
+        corners_mm=((x, low), (x, high), (0.0, high)),
+        keep_whole=slot_arc(body, portal),
+        obstacles=tuple(atan2(y, x) for x, y in rim.screws.places_mm),
+        obstacle_mm=rim.screws.boss_mm,
+        lap_mm=joint.lap_mm,
+    )
+
+
+def _ring_plan(body: Body, joint: Joint, top_mm: float) -> _Plan:
+    reach = (joint.clearance_mm + joint.collar_mm) / cos(body.half_angle)
+    return _Plan(
+        radius_mm=body.outside_radius_at(top_mm + joint.lap_mm) + reach,
+        corners_mm=(),
+        keep_whole=None,
+        obstacles=(),
+        obstacle_mm=0.0,
+        lap_mm=joint.lap_mm,
+    )
+
+
+def divide(
+    *, body: Body, portal: Portal, rim: Rim, joint: Joint, bed: Bed, slope: float
+) -> Division:
+    """Divide body and lid into pieces that fit the bed.
+
+    The first ring holds slot and portal whole; the others share what is left in equal heights.
+
+    Parameters
+    ----------
+    body, portal, rim, joint : Body, Portal, Rim, Joint
+        The separator.
+    bed : Bed
+        What the printer leaves for one piece.
+    slope : float
+        Lean of the keel from the vertical [rad].
+
+    Returns
+    -------
+    Division
+
+    Raises
+    ------
+    UnbuildableError
+        Where a ring, a sector or the slot does not fit the printer.
+    """
+    heights = _cut_heights(body=body, portal=portal, joint=joint, bed=bed, slope=slope)
+    rings = []
+    tops = (0.0, *heights)
+    bottoms = (*heights, -body.total_height_mm)
+    stagger = 0.0
+    for index, (top, bottom) in enumerate(zip(tops, bottoms, strict=True)):
+        plan = _ring_plan(body, joint, top) if index else _top_plan(body, portal, rim, joint)
+        found = _sectors(plan, bed, stagger)
+        if found is None:
+            raise _too_wide(f"ring {index + 1} of the body", plan, bed)
+        count, first = found
+        # half a sector on, so that no seam stands above the next
+        stagger = first + pi / count
+        rings.append(Ring(top_mm=top, bottom_mm=bottom, sectors=count, first_cut=first))
+    plan = _top_plan(body, portal, rim, joint)
+    found = _sectors(plan, bed, rings[0].first_cut + pi / max(rings[0].sectors, 2) / 2)
+    if found is None:
+        raise _too_wide("the lid", plan, bed)
+    return Division(rings=tuple(rings), lid_sectors=found[0], lid_first_cut=found[1])
+
+
+def _cut_heights(
+    *, body: Body, portal: Portal, joint: Joint, bed: Bed, slope: float
+) -> tuple[float, ...]:
+    """Heights of the ring cuts from the top down."""
+    total = body.total_height_mm
+    if total <= bed.height_mm:
+        return ()
+    least = -portal.frame_bottom_z_mm + joint.lap_mm + joint.clearance_mm + SPARE_MM
+    if least > bed.height_mm:
+        raise UnbuildableError(
+            f"slot and portal need a ring of {least:.0f} mm, the printer leaves "
+            f"{bed.height_mm:.0f} mm of height; choose a smaller body, a family with a lower slot, "
+            "or a taller printer.build_volume"
+        )
+    usable = bed.height_mm - joint.lap_mm
+    for rest in range(1, ceil(total / max(usable, 1.0)) + 2):
+        even = (total + rest * joint.lap_mm) / (rest + 1)
+        first = _clear_of_keel(
+            min(max(even, least), bed.height_mm), least,
+            body=body, portal=portal, joint=joint, bed=bed, slope=slope,
+        )
+        if first is None:
+            continue
+        height = (total - first) / rest
+        if height <= usable and height > 2 * joint.lap_mm:
+            return tuple(-first - height * k for k in range(rest))
+    raise UnbuildableError(
+        f"no way to cut a body of {total:.0f} mm for a printer that leaves {bed.height_mm:.0f} mm "
+        "of height; choose another body or printer.build_volume"
+    )
+
+
+def _clear_of_keel(
+    depth: float, least: float, *, body: Body, portal: Portal, joint: Joint, bed: Bed, slope: float
+) -> float | None:
+    """Depth of the first cut nearest to `depth` at which keel and socket do not spoil each other.
+
+    Either the keel ends above the socket's collar, or it is cut where it is wide enough to stand
+    on the bed outside the collar's groove; between the two its tip would start in mid-air.
+    """
+    reach = portal.farthest_radius_mm - body.outer_radius_mm
+    keel = -portal.frame_bottom_z_mm + reach / tan(slope)
+    below_keel = -keel_bottom(body, portal, slope) + joint.lap_mm + joint.clearance_mm + SPARE_MM
+    groove = joint.collar_mm + 2 * joint.clearance_mm + KEEL_LAND_MM
+    through_keel = keel - groove / tan(slope)
+    choices = []
+    if below_keel <= bed.height_mm:
+        choices.append(max(depth, below_keel))
+    if through_keel >= least:
+        choices.append(min(depth, through_keel))
+    return min(choices, key=lambda choice: abs(choice - depth), default=None)
+
+
+def _too_wide(what: str, plan: _Plan, bed: Bed) -> UnbuildableError:
+    span = max((hypot(*corner) for corner in plan.corners_mm), default=-inf)
+    whole = (
+        f", and slot and portal ({degrees(plan.keep_whole[1] - plan.keep_whole[0]):.0f} degrees of "
+        "it) stay whole"
+        if plan.keep_whole
+        else ""
+    )
+    return UnbuildableError(
+        f"{what} reaches {max(span, plan.radius_mm):.0f} mm from the axis{whole}; no sector of it "
+        f"fits the {bed.width_mm:.0f} x {bed.depth_mm:.0f} mm the bed leaves; choose a smaller body "
+        "or a larger printer.build_volume"
+    )

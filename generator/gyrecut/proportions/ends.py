@@ -1,0 +1,177 @@
+"""The two ends of the body: rim, lid, finder and outlet above, bin ring below."""
+
+from __future__ import annotations
+
+from math import atan2, cos, pi, radians, sin, tan
+from typing import TYPE_CHECKING
+
+from gyrecut.airflow.entries import entry_loss_bell_mouth
+from gyrecut.errors import UnbuildableError
+from gyrecut.proportions.dimensions import (
+    BellMouth,
+    BinRing,
+    Finder,
+    Lid,
+    OutletCuff,
+    Rim,
+)
+from gyrecut.proportions.fasteners import PITCH_SPARE_MM, screws, spread
+
+if TYPE_CHECKING:
+    from gyrecut.proportions.dimensions import Body, Cuff, Joint, Point, Portal
+
+RIM_FLOOR_MM = 2.0  # plastic left under an insert hole
+RIM_LEAST_MM = 4.0
+CONTRACTION_HALF_ANGLE = radians(15.0)  # lowest loss at 15 to 40 degrees included, SMACNA table
+DIFFUSER_HALF_ANGLE = radians(7.5)
+BELL_ROUNDING = 0.2  # rounding over throat: entry loss 0.03, Idelchik diagram 3-4
+BELL_ROUNDING_LEAST = 0.05
+REDUCER_LEAST_MM = 2.0
+COLLAR_MM = 8.0  # how far the finder's collar lies on the lid, for glue
+SPIGOT_REACH = 0.4  # blower spigot length over throat: common practice, no source
+
+
+def rim_radius(body: Body, fastener: str) -> float:
+    """Outside radius of the lid's flange [mm]: one boss beyond the wall."""
+    return body.outer_radius_mm + screws(fastener, ()).boss_mm
+
+
+def rim(*, body: Body, portal: Portal, fastener: str, slope: float) -> Rim:
+    """Proportion the lid's flange and place its screws round barrel and slot.
+
+    Parameters
+    ----------
+    body, portal : Body, Portal
+        What the flange stands on.
+    fastener : str
+        Catalogue name of the screws.
+    slope : float
+        Lean of the gusset under the flange, from the vertical [rad].
+
+    Returns
+    -------
+    Rim
+        Its thickness is the least at which every insert hole ends inside flange and gusset.
+    """
+    row = screws(fastener, ())
+    boss, hole = row.boss_mm, row.insert_hole_mm
+    gusset_at_hole = (boss / 2 - hole / 2) / tan(slope)
+    circle = body.outer_radius_mm + boss / 2
+    lintel_x = portal.face_x_mm + portal.depth_mm / 2
+    outer_y = body.outer_radius_mm + boss / 2
+    inner_y = body.radius_mm - portal.mouth_width_mm - body.wall_mm - boss / 2
+    # clockwise from the slot's tangent point, the long way round to the lintel's inner end
+    arc = spread(pi / 2, atan2(inner_y, lintel_x) % (2 * pi) - 2 * pi, PITCH_SPARE_MM / circle)[:-1]
+    beside = spread(0.0, lintel_x, PITCH_SPARE_MM)[1:]
+    places: tuple[Point, ...] = (
+        *((circle * cos(angle), circle * sin(angle)) for angle in arc),
+        *((x, outer_y) for x in beside),
+        (lintel_x, inner_y),
+    )
+    return Rim(
+        outer_radius_mm=body.outer_radius_mm + boss,
+        thickness_mm=max(RIM_LEAST_MM, row.insert_depth_mm + RIM_FLOOR_MM - gusset_at_hole),
+        screws=screws(fastener, places),
+    )
+
+
+def finder(*, body: Body, bore_mm: float, length_mm: float, stub_mm: float) -> Finder:
+    """Proportion the vortex finder and the collar it hangs by."""
+    outer = bore_mm / 2 + body.wall_mm
+    return Finder(
+        bore_mm=bore_mm,
+        length_mm=length_mm,
+        wall_mm=body.wall_mm,
+        collar_radius_mm=outer + COLLAR_MM,
+        collar_thickness_mm=max(RIM_LEAST_MM, 1.5 * body.wall_mm),
+        stub_mm=stub_mm,
+    )
+
+
+def lid(*, thickness_mm: float, finder: Finder, joint: Joint) -> Lid:
+    """Proportion the lid: flat, with the hole the finder hangs in."""
+    return Lid(
+        thickness_mm=thickness_mm,
+        finder_hole_mm=2 * (finder.outer_radius_mm + joint.clearance_mm),
+    )
+
+
+def outlet_cuff(*, finder: Finder, cuff: Cuff, joint: Joint, slope: float) -> OutletCuff:
+    """Proportion the outlet: a socket over the finder's stub, a reducer, a hose cuff."""
+    step = (finder.bore_mm - cuff.bore_mm) / 2
+    half_angle = CONTRACTION_HALF_ANGLE if step > 0 else DIFFUSER_HALF_ANGLE
+    socket = finder.outer_radius_mm + joint.clearance_mm + joint.collar_mm
+    outside = abs(socket - cuff.widest_radius_mm)
+    return OutletCuff(
+        socket_mm=finder.stub_mm,
+        socket_radius_mm=socket,
+        reducer_length_mm=max(abs(step) / tan(half_angle), outside / tan(slope), REDUCER_LEAST_MM),
+        cuff=cuff,
+    )
+
+
+def bell_mouth(*, finder: Finder, throat_mm: float, joint: Joint) -> BellMouth:
+    """Proportion the rounded intake of a blower that stands on the finder.
+
+    Parameters
+    ----------
+    finder : Finder
+        The tube the bell-mouth plugs into.
+    throat_mm : float
+        The blower's intake [mm].
+    joint : Joint
+        Gap of the plug.
+
+    Returns
+    -------
+    BellMouth
+        Rounded with 0.2 of the throat where the finder leaves room, with less where it does not.
+
+    Raises
+    ------
+    UnbuildableError
+        Where the finder is too narrow for a rounded edge at all.
+    """
+    plug = finder.bore_mm / 2 - joint.clearance_mm
+    lip = 0.5 * finder.wall_mm
+    room = plug - lip - throat_mm / 2
+    rounding = min(BELL_ROUNDING * throat_mm, room)
+    if rounding < BELL_ROUNDING_LEAST * throat_mm:
+        largest = (plug - lip) / (0.5 + BELL_ROUNDING_LEAST)
+        raise UnbuildableError(
+            f"outlet.intake_diameter is {throat_mm:g} mm; the finder's bore of "
+            f"{finder.bore_mm:.1f} mm allows at most {largest:.0f} mm with a rounded edge; choose "
+            "a smaller blower intake or a larger body"
+        )
+    return BellMouth(
+        throat_mm=throat_mm,
+        rounding_mm=rounding,
+        entry_loss=float(entry_loss_bell_mouth(rounding / throat_mm, end_wall=True)),
+        plug_radius_mm=plug,
+        plug_length_mm=finder.stub_mm,
+        stop_radius_mm=finder.outer_radius_mm,
+        stop_thickness_mm=max(RIM_LEAST_MM, finder.wall_mm),
+        spigot_length_mm=max(12.0, SPIGOT_REACH * throat_mm),
+        wall_mm=finder.wall_mm,
+    )
+
+
+def bin_ring(*, body: Body, joint: Joint, fastener: str, lid_thickness_mm: float) -> BinRing:
+    """Proportion the ring on the bin's lid, screws outside its socket."""
+    row = screws(fastener, ())
+    socket = (
+        body.outside_radius_at(-body.total_height_mm + joint.lap_mm)
+        + (joint.clearance_mm + joint.collar_mm) / cos(body.half_angle)
+    )
+    circle = socket + row.boss_mm / 2
+    count = max(4, len(spread(0.0, 2 * pi * circle, PITCH_SPARE_MM)) - 1)
+    places = tuple(
+        (circle * cos(2 * pi * k / count + pi / count), circle * sin(2 * pi * k / count + pi / count))
+        for k in range(count)
+    )
+    return BinRing(
+        bore_mm=body.dust_outlet_diameter_mm,
+        outer_radius_mm=socket + row.boss_mm,
+        thickness_mm=lid_thickness_mm,
+        screws=screws(fastener, places),
+    )

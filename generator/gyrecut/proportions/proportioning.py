@@ -1,0 +1,228 @@
+"""From one stage of a profile to every dimension of its separator."""
+
+from __future__ import annotations
+
+from math import radians
+from typing import TYPE_CHECKING
+
+from gyrecut.catalogue import families, hoses
+from gyrecut.correlations.geometry import CycloneGeometry, body_diameter_for_inlet_velocity
+from gyrecut.correlations.lapple import body_diameter_for_cut_size_lapple
+from gyrecut.errors import UnbuildableError
+from gyrecut.proportions.dimensions import Body, Dimensions, Joint, Slot
+from gyrecut.proportions.division import Bed, divide
+from gyrecut.proportions.ends import (
+    bell_mouth,
+    bin_ring,
+    finder,
+    lid,
+    outlet_cuff,
+    rim,
+    rim_radius,
+)
+from gyrecut.proportions.fasteners import MM
+from gyrecut.proportions.inlet import hose_cuff, portal, transition
+
+if TYPE_CHECKING:
+    from gyrecut.airflow.air import AirState
+    from gyrecut.catalogue.rows import Dust
+    from gyrecut.proportions.dimensions import BellMouth, Cuff, Finder, OutletCuff
+    from gyrecut.profile import Profile, Stage
+
+SLOPE_SPARE = radians(1.0)  # facets of a mesh lean a little more than the surface they stand for
+SMALLEST_BODY_MM, LARGEST_BODY_MM = 40.0, 900.0
+FIT_STEP = 0.98  # two sizes tried one after the other differ by this factor
+
+
+def shape_of(stage: Stage) -> CycloneGeometry:
+    """Give a stage's proportions, its own or its family's, as a body of 1 m."""
+    row = families()[stage.proportions] if isinstance(stage.proportions, str) else stage.proportions
+    return CycloneGeometry(
+        body_diameter=1.0,
+        slot_height=row.slot_height,
+        slot_width=row.slot_width,
+        finder_diameter=row.finder_diameter,
+        finder_length=row.finder_length,
+        barrel_height=row.barrel_height,
+        total_height=row.total_height,
+        dust_outlet_diameter=row.dust_outlet_diameter,
+    )
+
+
+def geometry_of(d: Dimensions) -> CycloneGeometry:
+    """Give the inside of a separator in metres, as the correlations take it."""
+    return CycloneGeometry(
+        body_diameter=d.body.diameter_mm / MM,
+        slot_height=d.slot.height_mm / MM,
+        slot_width=d.slot.width_mm / MM,
+        finder_diameter=d.finder.bore_mm / MM,
+        finder_length=d.finder.length_mm / MM,
+        barrel_height=d.body.barrel_height_mm / MM,
+        total_height=d.body.total_height_mm / MM,
+        dust_outlet_diameter=d.body.dust_outlet_diameter_mm / MM,
+    )
+
+
+def bed_of(profile: Profile) -> Bed:
+    """What the profile's printer leaves for one piece, in millimetres."""
+    x, y, z = profile.printer.build_volume
+    margin = profile.printer.margin
+    return Bed(width_mm=(x - 2 * margin) * MM, depth_mm=(y - 2 * margin) * MM, height_mm=(z - margin) * MM)
+
+
+def proportion(profile: Profile, stage: Stage, *, air: AirState, dust: Dust) -> Dimensions:
+    """Derive every dimension of one stage's separator.
+
+    Parameters
+    ----------
+    profile : Profile
+        The whole profile: hose, outlet, printer, walls, joints.
+    stage : Stage
+        The stage to proportion; its flow is the profile's shared by its `count` bodies.
+    air : AirState
+        The air, for a body sized by its cut size.
+    dust : Dust
+        The dust, for the same.
+
+    Returns
+    -------
+    Dimensions
+
+    Raises
+    ------
+    UnbuildableError
+        Where no such separator can be made, with the reason and the profile's line.
+    OutOfRangeError
+        Where the proportions or the size lie outside what the correlations hold for.
+    """
+    shape = shape_of(stage)
+    flow = profile.air.flow / stage.count
+    if stage.fit_pieces is not None:
+        return _largest_that_fits(profile, shape, stage.fit_pieces)
+    if stage.body_diameter is not None:
+        diameter = stage.body_diameter
+    elif stage.inlet_velocity is not None:
+        diameter = float(
+            body_diameter_for_inlet_velocity(
+                shape, inlet_velocity=stage.inlet_velocity, flow=flow
+            )
+        )
+    elif stage.cut_size is not None:
+        diameter = float(
+            body_diameter_for_cut_size_lapple(
+                shape,
+                cut_size=stage.cut_size,
+                flow=flow,
+                particle_density=dust.particle_density,
+                air_density=air.density,
+                viscosity=air.viscosity,
+            )
+        )
+    else:
+        raise UnbuildableError("the stage has nothing to take its size from")
+    return _proportion_at(profile, shape, round(diameter * MM, 1))
+
+
+def _largest_that_fits(profile: Profile, shape: CycloneGeometry, pieces: int) -> Dimensions:
+    diameter = LARGEST_BODY_MM
+    reason: UnbuildableError | None = None
+    while diameter >= SMALLEST_BODY_MM:
+        try:
+            dimensions = _proportion_at(profile, shape, round(diameter, 1))
+        except UnbuildableError as unbuildable:
+            reason = unbuildable
+        else:
+            if dimensions.division.piece_count <= pieces:
+                return dimensions
+        diameter *= FIT_STEP
+    why = f"; the smallest body fails because {reason}" if reason else ""
+    raise UnbuildableError(
+        f"no body of {SMALLEST_BODY_MM:g} to {LARGEST_BODY_MM:g} mm comes out of this printer in "
+        f"{pieces} pieces or fewer; give a larger fit_pieces{why}"
+    )
+
+
+def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float) -> Dimensions:
+    if not SMALLEST_BODY_MM <= diameter_mm <= LARGEST_BODY_MM:
+        raise UnbuildableError(
+            f"the body comes out at {diameter_mm:g} mm; allowed {SMALLEST_BODY_MM:g} to "
+            f"{LARGEST_BODY_MM:g} mm; choose another flow, inlet velocity or cut size"
+        )
+    printer, fastener = profile.printer, profile.joints.fastener
+    wall = profile.walls.body * MM
+    slope = printer.overhang_limit - SLOPE_SPARE
+    bed = bed_of(profile)
+    body = Body(
+        diameter_mm=diameter_mm,
+        barrel_height_mm=shape.barrel_height * diameter_mm,
+        total_height_mm=shape.total_height * diameter_mm,
+        dust_outlet_diameter_mm=shape.dust_outlet_diameter * diameter_mm,
+        wall_mm=wall,
+    )
+    slot = Slot(
+        height_mm=shape.slot_height * diameter_mm, width_mm=shape.slot_width * diameter_mm
+    )
+    joint = Joint(
+        lap_mm=profile.joints.lap * MM, clearance_mm=printer.clearance * MM, collar_mm=wall
+    )
+    hose = profile.air.hose
+    cuff = hose_cuff(
+        nominal_mm=hoses()[hose.nominal].nominal * MM,
+        measured_mm=None if hose.measured is None else hose.measured * MM,
+        fit=hose.fit,
+        wall_mm=wall,
+        slope=slope,
+    )
+    mouth = portal(
+        body=body,
+        slot=slot,
+        rim_radius_mm=rim_radius(body, fastener),
+        cuff=cuff,
+        fastener=fastener,
+        slope=slope,
+        bridge_limit_mm=printer.bridge_limit * MM,
+    )
+    flange = rim(body=body, portal=mouth, fastener=fastener, slope=slope)
+    tube = finder(
+        body=body,
+        bore_mm=shape.finder_diameter * diameter_mm,
+        length_mm=shape.finder_length * diameter_mm,
+        stub_mm=joint.lap_mm,
+    )
+    roof = lid(thickness_mm=profile.walls.lid * MM, finder=tube, joint=joint)
+    return Dimensions(
+        body=body,
+        slot=slot,
+        finder=tube,
+        rim=flange,
+        portal=mouth,
+        transition=transition(
+            body=body, slot=slot, portal=mouth, cuff=cuff, slope=slope, tallest_mm=bed.height_mm
+        ),
+        lid=roof,
+        bin_ring=bin_ring(
+            body=body, joint=joint, fastener=fastener, lid_thickness_mm=profile.walls.lid * MM
+        ),
+        outlet=_outlet(profile, tube, joint, slope),
+        joint=joint,
+        division=divide(
+            body=body, portal=mouth, rim=flange, joint=joint, bed=bed, slope=slope
+        ),
+        slope=slope,
+    )
+
+
+def _outlet(
+    profile: Profile, tube: Finder, joint: Joint, slope: float
+) -> OutletCuff | BellMouth:
+    outlet = profile.outlet
+    if outlet.kind == "blower":
+        return bell_mouth(finder=tube, throat_mm=outlet.intake_diameter * MM, joint=joint)
+    cuff: Cuff = hose_cuff(
+        nominal_mm=hoses()[outlet.hose].nominal * MM,
+        measured_mm=None if outlet.measured is None else outlet.measured * MM,
+        fit=outlet.fit,
+        wall_mm=tube.wall_mm,
+        slope=slope,
+    )
+    return outlet_cuff(finder=tube, cuff=cuff, joint=joint, slope=slope)

@@ -1,0 +1,1 @@
+"""What the separator will do: forecasts that combine the published correlations."""

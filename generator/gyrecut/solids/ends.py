@@ -1,0 +1,103 @@
+"""What stands at the ends: bin ring below, hose outlet or bell-mouth above, millimetres."""
+
+from __future__ import annotations
+
+from math import cos, pi, sin
+from typing import TYPE_CHECKING
+
+from gyrecut.proportions.dimensions import BellMouth
+from gyrecut.solids.cuff import cuff_inside, cuff_outside
+from gyrecut.solids.shapes import joined, revolved, sound, upright_holes, without
+from gyrecut.solids.sockets import collar
+
+if TYPE_CHECKING:
+    from cadquery.func import Solid
+
+    from gyrecut.proportions.dimensions import Dimensions, OutletCuff, Point
+    from gyrecut.solids.shapes import Arc
+
+BEYOND = 1.0
+
+
+def bin_ring(d: Dimensions) -> Solid:
+    """Make the ring on the bin's lid: a drilled plate with the socket for the end of the cone.
+
+    Parameters
+    ----------
+    d : Dimensions
+
+    Returns
+    -------
+    Solid
+        In machine coordinates; the end of the cone stands on its plate.
+    """
+    ring, seat = d.bin_ring, -d.body.total_height_mm
+    bore, edge, bottom = ring.bore_mm / 2, ring.outer_radius_mm, seat - ring.thickness_mm
+    plate = revolved((bore, bottom), (edge, bottom), (edge, seat), (bore, seat))
+    screws = ring.screws
+    return sound(
+        "bin ring",
+        without(
+            "bin ring",
+            joined("bin ring", plate, collar(d.body, d.joint, seat, gusset=None)),
+            *upright_holes(
+                screws.places_mm, screws.clearance_hole_mm, bottom=bottom - BEYOND, top=seat + BEYOND
+            ),
+        ),
+    )
+
+
+def outlet(d: Dimensions) -> Solid:
+    """Make what stands on the finder's stub: a hose outlet over it, or a bell-mouth in it.
+
+    Parameters
+    ----------
+    d : Dimensions
+
+    Returns
+    -------
+    Solid
+        In machine coordinates.
+    """
+    if isinstance(d.outlet, BellMouth):
+        return sound("bell-mouth", revolved(*_bell_mouth_outline(d.outlet, d.finder_top_mm, d.slope)))
+    return sound("outlet", revolved(*_cuff_outline(d.outlet, d, d.finder_top_mm)))
+
+
+def _cuff_outline(out: OutletCuff, d: Dimensions, seat: float) -> tuple[Point, ...]:
+    tube, socket = d.finder, d.finder.outer_radius_mm + d.joint.clearance_mm
+    root = seat + out.reducer_length_mm
+    low = seat - out.socket_mm
+    return (
+        (socket, seat),
+        (socket, low),
+        (out.socket_radius_mm, low),
+        (out.socket_radius_mm, seat),
+        *cuff_outside(out.cuff, root),
+        *cuff_inside(out.cuff, root),
+        (tube.bore_mm / 2, seat),
+    )
+
+
+def _bell_mouth_outline(bell: BellMouth, seat: float, slope: float) -> tuple[Point | Arc, ...]:
+    """Plug and rounding below the stub's end, stop and spigot above."""
+    throat, rounding = bell.throat_mm / 2, bell.rounding_mm
+    spigot, bottom = bell.spigot_radius_mm, seat - bell.plug_length_mm
+    stop_top, end = seat + bell.stop_thickness_mm, seat + bell.height_mm(slope)
+    gusset_top = stop_top + bell.gusset_mm(slope)
+    eighth = pi / 4
+    arc: Arc = (
+        (throat + rounding - rounding * cos(eighth), bottom + rounding - rounding * sin(eighth)),
+        (throat, bottom + rounding),
+    )
+    return (
+        (throat + rounding, bottom),
+        arc,
+        (throat, end),
+        (spigot, end),
+        (spigot, gusset_top),
+        (bell.stop_radius_mm, stop_top),
+        (bell.stop_radius_mm, seat),
+        (bell.plug_radius_mm, seat),
+        (bell.plug_radius_mm, bottom),
+    )
