@@ -17,7 +17,8 @@ from gyrecut.kit.folder import MANIFEST
 from gyrecut.kit.manifest import plain
 from gyrecut.profile.dust import dust_of
 from gyrecut.profile.models import profile_hash
-from gyrecut.proportions.proportioning import bed_of, geometry_of, proportion
+from gyrecut.proportions.printing import bed_of
+from gyrecut.proportions.proportioning import geometry_of, proportion
 from gyrecut.proportions.rules import geometry_rules
 from gyrecut.separation.limits import Totals, limit_findings
 from gyrecut.separation.prediction import first_prediction
@@ -143,6 +144,7 @@ def design(profile: Profile) -> Design:
             dust=dust,
             feed=None if feed is None else feed / stage.count,
             hose_flow=flow,
+            printer=profile.printer,
         )
         stages.append(
             StageDesign(
@@ -212,7 +214,7 @@ def _pieces(design: Design, progress: Progress) -> Iterator[KitPiece]:
     from gyrecut.solids import make_parts  # noqa: PLC0415 - same
 
     density = polymers()[design.profile.material].density
-    bed = bed_of(design.profile)
+    bed = bed_of(design.profile.printer)
     several = len(design.stages) > 1
     total = sum(stage.piece_count // stage.copies for stage in design.stages)
     done = 0
@@ -221,9 +223,7 @@ def _pieces(design: Design, progress: Progress) -> Iterator[KitPiece]:
         parts = make_parts(stage.dimensions)
         progress("solids", stage.number, len(design.stages))
         prefix = f"stage-{stage.number}-" if several else ""
-        for piece in make_pieces(
-            parts, stage.dimensions, bed, prefix=prefix, copies=stage.copies
-        ):
+        for piece in make_pieces(parts, stage.dimensions, bed, prefix=prefix, copies=stage.copies):
             yield kit_piece(piece, density=density, stage=stage.number)
             done += 1
             progress("pieces", done, total)
@@ -249,7 +249,9 @@ def _contents(
         dimensions=[stage.dimensions for stage in design.stages],
         prediction=[stage.prediction for stage in design.stages],
         body=tuple(
-            fact for stage in design.stages for fact in body_facts(stage.dimensions, _of(stage, several))
+            fact
+            for stage in design.stages
+            for fact in body_facts(stage.dimensions, _of(stage, several))
         ),
         estimate=tuple(
             fact

@@ -25,6 +25,8 @@ if TYPE_CHECKING:
 
     from gyrecut.profile import Profile
 
+    Progress = Callable[[str, int, int], None]
+
 BARREL = {"name": "barrel-1", "title": "Barrel, first slice", "copies": 2}
 LID = {"name": "lid", "title": "Lid", "copies": 1}
 PIECES = [
@@ -47,9 +49,7 @@ STOP = Finding(
 def kit() -> None:
     """A build that is done at once."""
 
-    def build(
-        design: pipeline.Design, folder: Path, progress: Callable[[str, int, int], None]
-    ) -> pipeline.BuildResult:
+    def build(design: pipeline.Design, folder: Path, progress: Progress) -> pipeline.BuildResult:
         for done in range(3):
             progress("solids", done, 2)
         progress("files", 1, 1)
@@ -80,7 +80,7 @@ def stop() -> None:
 def build_fails() -> None:
     """A build that the CAD kernel gives up."""
 
-    def build(*_: object) -> NoReturn:
+    def build(design: pipeline.Design, folder: Path, progress: Progress) -> NoReturn:  # noqa: ARG001
         raise BuildError("the barrel did not come out as one solid")
 
     system.require_cad = _nothing
@@ -90,22 +90,25 @@ def build_fails() -> None:
 def long_build() -> None:
     """A build that does not end, and can be interrupted even where the tests run in background."""
 
-    def build(
-        _design: object, _folder: object, progress: Callable[[str, int, int], None]
-    ) -> NoReturn:
+    def build(design: pipeline.Design, folder: Path, progress: Progress) -> NoReturn:  # noqa: ARG001
         progress("solids", 0, 2)
         time.sleep(60)
         raise AssertionError("nobody interrupted")
 
-    signal.signal(signal.SIGINT, signal.default_int_handler)
+    interruptible()
     system.require_cad = _nothing
     pipeline.build = build
+
+
+def interruptible() -> None:
+    """Nothing wrong yet, and Ctrl-C works even where the tests run in background."""
+    signal.signal(signal.SIGINT, signal.default_int_handler)
 
 
 def fault() -> None:
     """A mistake of our own."""
 
-    def design(_: object) -> NoReturn:
+    def design(profile: Profile) -> NoReturn:  # noqa: ARG001
         raise ZeroDivisionError("invented\nfault")
 
     pipeline.design = design
@@ -113,7 +116,11 @@ def fault() -> None:
 
 def not_a_number() -> None:
     """A result that JSON has no word for."""
-    pipeline.Design.as_document = lambda _: {"cut_size": float("nan")}  # type: ignore[method-assign]
+
+    def as_document(self: pipeline.Design) -> dict[str, Any]:  # noqa: ARG001
+        return {"cut_size": float("nan")}
+
+    pipeline.Design.as_document = as_document  # type: ignore[method-assign]
 
 
 def no_libgl() -> None:
@@ -141,7 +148,7 @@ def _refuse(module: str, error: Exception) -> None:
             if name == module:
                 raise error
 
-    sys.meta_path.insert(0, Refusing())  # type: ignore[arg-type]
+    sys.meta_path.insert(0, Refusing())
 
 
 def _nothing() -> None:
@@ -151,8 +158,8 @@ def _nothing() -> None:
 MISHAPS = {
     mishap.__name__: mishap
     for mishap in (
-        kit, kit_to_stop, stop, build_fails, long_build, fault, not_a_number, no_libgl,
-        no_unheard_of_library, no_cadquery,
+        kit, kit_to_stop, stop, build_fails, long_build, interruptible, fault, not_a_number,
+        no_libgl, no_unheard_of_library, no_cadquery,
     )
 }  # fmt: skip
 

@@ -191,6 +191,33 @@ def test_130_on_ctrl_c(profile: Path, tmp_path: Path) -> None:
     assert (process.returncode, out, err) == (130, "", "gyrecut: stopped by Ctrl-C\n")
 
 
+def test_130_in_a_real_build_leaves_the_earlier_kit(
+    run: Run, profile: Path, tmp_path: Path
+) -> None:
+    first = run("build", profile)
+    assert first.returncode == 0, first.stderr
+    kit = tmp_path / "out" / "luthier-sander"
+    earlier = {path: path.read_bytes() for path in kit.rglob("*") if path.is_file()}
+    assert kit / "manifest.json" in earlier
+    with subprocess.Popen(
+        command_line("build", profile, mishap="interruptible"),
+        cwd=tmp_path,
+        env=clean_environment(),
+        stdout=subprocess.PIPE,
+        stderr=subprocess.PIPE,
+        text=True,
+    ) as process:
+        assert process.stderr is not None
+        while not process.stderr.readline().startswith("checks: 1 of"):
+            assert process.poll() is None
+        process.send_signal(signal.SIGINT)
+        out, err = process.communicate(timeout=60)
+    assert (process.returncode, out) == (130, "")
+    assert err.endswith("gyrecut: stopped by Ctrl-C\n")
+    assert {path: path.read_bytes() for path in kit.rglob("*") if path.is_file()} == earlier
+    assert [path.name for path in kit.parent.iterdir()] == ["luthier-sander"]
+
+
 @pytest.mark.parametrize("form", [[], ["--json"]])
 def test_141_where_nobody_reads_the_result(form: list[str]) -> None:
     reading, writing = os.pipe()

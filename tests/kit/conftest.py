@@ -79,11 +79,12 @@ def made_contents() -> KitContents:
             ),
         ),
         pieces=(
+            measured("barrel", "Barrel", barrel, barrel.moved(Location((0, 0, 300), (180, 0, 0)))),
             measured(
-                "barrel", "Barrel", barrel, barrel.moved(Location((0, 0, 300), (180, 0, 0)))
-            ),
-            measured(
-                "inlet", "Inlet | transition", block, block.moved(Location((200, 0, 100), (0, 90, 0)))
+                "inlet",
+                "Inlet | transition",
+                block,
+                block.moved(Location((200, 0, 100), (0, 90, 0))),
             ),
             measured("plate", "Plate", plate, plate, copies=3, stage=2),
         ),

@@ -4,13 +4,16 @@ from __future__ import annotations
 
 from functools import cache
 from pathlib import Path
+from typing import TYPE_CHECKING
 
 import pytest
 
 from gyrecut import pipeline
 from gyrecut.profile import load_profile
-from gyrecut.proportions.dimensions import Dimensions
 from gyrecut.solids import Parts, make_parts
+
+if TYPE_CHECKING:
+    from gyrecut.proportions.dimensions import Dimensions
 
 PROFILES = Path(__file__).parents[2] / "profiles"
 NAMES = ("luthier-sander", "joinery-planer", "casting-bench")

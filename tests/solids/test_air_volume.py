@@ -7,21 +7,28 @@ polygon and a circle by the prismatoid rule with Minkowski's mixed area.
 
 from __future__ import annotations
 
-from math import asin, hypot, pi, sqrt
+from math import asin, cos, hypot, pi, sin, sqrt
+from typing import TYPE_CHECKING
 
+import numpy as np
 import pytest
 from cadquery import func
 from cadquery.func import Location, Shape, Solid, Vector
+from scipy.optimize import brentq
 
 from gyrecut.proportions.dimensions import Dimensions, OutletCuff
 from gyrecut.proportions.inlet import mouth_centre
-from gyrecut.solids import Parts
+
+if TYPE_CHECKING:
+    from gyrecut.solids import Parts
 
 CAP = 3.0
 
 
 def assembled(parts: Parts) -> Shape:
-    return func.fuse(parts.body, parts.lid, parts.finder, parts.transition, parts.bin_ring, parts.outlet)
+    return func.fuse(
+        parts.body, parts.lid, parts.finder, parts.transition, parts.bin_ring, parts.outlet
+    )
 
 
 def caps(d: Dimensions) -> dict[str, Solid]:
@@ -31,7 +38,9 @@ def caps(d: Dimensions) -> dict[str, Solid]:
     across = max(cuff.tip_diameter_mm, cuff.bore_mm) / 2 + 1.0
     floor = -d.body.total_height_mm - d.bin_ring.thickness_mm
     out = d.outlet
-    top = out.cuff.tip_diameter_mm / 2 + 1.0 if isinstance(out, OutletCuff) else out.spigot_radius_mm
+    top = (
+        out.cuff.tip_diameter_mm / 2 + 1.0 if isinstance(out, OutletCuff) else out.spigot_radius_mm
+    )
     return {
         "hose": Solid.makeCylinder(across, CAP, Vector(hose_x - CAP, y, z), Vector(1, 0, 0)),
         "bin": Solid.makeCylinder(d.bin_ring.bore_mm / 2 + 1.0, CAP, Vector(0, 0, floor - CAP)),
@@ -44,7 +53,9 @@ def rooms(machine: Shape, closed_with: list[Solid]) -> list[Shape]:
     whole = func.fuse(machine, *closed_with)
     box = whole.BoundingBox()
     around = Solid.makeBox(
-        box.xlen + 20, box.ylen + 20, box.zlen + 20,
+        box.xlen + 20,
+        box.ylen + 20,
+        box.zlen + 20,
         Vector(box.xmin - 10, box.ymin - 10, box.zmin - 10),
     )
     return sorted(func.cut(around, whole).Solids(), key=lambda room: -room.Volume())
@@ -79,7 +90,7 @@ def air_of_body(d: Dimensions) -> float:
     straight = -(p.face_x_mm + p.depth_mm) - reach
     # between the tangent and the circle, from the slot's inner edge to the tangent point
     horn = radius * reach - (reach * (radius - width) + radius**2 * asin(reach / radius)) / 2
-    channel = (straight * (width + p.mouth_width_mm) / 2 + horn) * a
+    channel = (straight * (width + p.mouth_width_mm) / 2 + horn + blunted_edge(d)) * a
     mouth = polygon_area(p.mouth_outline(radius)) * p.depth_mm
     hanging = pi * (d.finder.outer_radius_mm**2 - (d.finder.bore_mm / 2) ** 2) * d.finder.length_mm
     return (
@@ -89,6 +100,29 @@ def air_of_body(d: Dimensions) -> float:
         + mouth
         - (hanging - corners_lost_to_lip(d))
     )
+
+
+def blunted_edge(d: Dimensions) -> float:
+    """Plan area of the feather taken off where the channel's inner wall meets the bore.
+
+    A right triangle with the cut as one leg, less the segment of the bore's circle. The third
+    corner and the angle are found here by stepping along the wall, not as the solid finds them.
+    """
+    radius, p = d.body.radius_mm, d.portal
+    tip = np.array([-sqrt(radius**2 - (radius - d.slot.width_mm) ** 2), radius - d.slot.width_mm])
+    mouth = np.array([p.face_x_mm + p.depth_mm, radius - p.mouth_width_mm])
+    along = (mouth - tip) / np.linalg.norm(mouth - tip)
+    across = np.array([along[1], -along[0]]) if along[0] > 0 else np.array([-along[1], along[0]])
+
+    def outside_bore(back: float) -> float:
+        return float(np.linalg.norm(tip + back * along + p.edge_mm * across)) - radius
+
+    back = float(brentq(outside_bore, 0.0, 10 * p.edge_mm))
+    foot = tip + back * along
+    chord = float(np.linalg.norm(foot + p.edge_mm * across - tip))
+    half = asin(chord / 2 / radius)
+    segment = radius**2 * (half - sin(half) * cos(half))
+    return back * p.edge_mm / 2 - segment
 
 
 def corners_lost_to_lip(d: Dimensions) -> float:
@@ -115,8 +149,10 @@ def air_above_the_lid(d: Dimensions) -> float:
     out = d.outlet
     if isinstance(out, OutletCuff):
         cuff = out.cuff.bore_mm / 2
-        return stub + frustum(out.reducer_length_mm, max(bore, cuff), min(bore, cuff)) + (
-            pi * cuff**2 * out.cuff.height_mm
+        return (
+            stub
+            + frustum(out.reducer_length_mm, max(bore, cuff), min(bore, cuff))
+            + (pi * cuff**2 * out.cuff.height_mm)
         )
     throat, r = out.throat_mm / 2, out.rounding_mm
     straight = pi * throat**2 * (out.plug_length_mm + out.height_mm(d.slope))

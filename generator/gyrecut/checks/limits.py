@@ -5,12 +5,12 @@ from __future__ import annotations
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
+from gyrecut.proportions.printing import smallest_wall_mm
+
 if TYPE_CHECKING:
     from gyrecut.profile.models import Printer
 
 MM = 1000.0
-BEADS_IN_A_WALL = 2  # a wall of one bead leaks and breaks: print service design rules
-SMALLEST_RESIN_WALL_MM = 1.0  # free-standing, print service design rules
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -44,11 +44,10 @@ class PrintLimits:
 def limits_of(printer: Printer) -> PrintLimits:
     """Give the limits that a profile's printer sets."""
     x, y, z = (length * MM for length in printer.build_volume)
-    line = printer.line_width
     return PrintLimits(
         build_volume_mm=(x, y, z),
         margin_mm=printer.margin * MM,
-        smallest_wall_mm=(SMALLEST_RESIN_WALL_MM if line is None else BEADS_IN_A_WALL * line * MM),
+        smallest_wall_mm=smallest_wall_mm(printer),
         overhang_limit=printer.overhang_limit,
         bridge_limit_mm=printer.bridge_limit * MM,
         process=printer.process,

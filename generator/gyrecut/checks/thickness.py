@@ -12,6 +12,8 @@ That number alone also shrinks to nothing at every sharp edge, so three kinds of
   smallest wall is not a wall.
 
 A groove or a drilled tip also closes two faces, but around material that goes on: it is found.
+Not found: a thin spot less than about one smallest wall across, such as two cones tip to tip, and
+a pin, which is thin but no wall.
 """
 
 from __future__ import annotations

@@ -26,6 +26,8 @@ def cautions_for(design: Design) -> tuple[Caution, ...]:
 
 def print_cautions(out: Console, shown: tuple[Caution, ...]) -> None:
     """Write cautions in full."""
+    from rich.padding import Padding  # noqa: PLC0415 - `--json` does without
+
     out.print("Cautions", style="bold")
     for caution in shown:
-        out.print(f"  {caution.title}. {caution.text}")
+        out.print(Padding(f"{caution.title}. {caution.text}", (0, 0, 0, 2)))

@@ -45,7 +45,8 @@ def rings(body: Solid, d: Dimensions) -> tuple[Solid, ...]:
         else:
             below_keel = _without_keel(body, d) if index == 1 else body
             piece = joined(
-                name, common(name, below_keel, slab),
+                name,
+                common(name, below_keel, slab),
                 collar(d.body, d.joint, ring.top_mm, gusset=d.slope),
             )
         cut.append(sound(name, one_solid(clean(piece), name)))

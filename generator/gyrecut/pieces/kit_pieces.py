@@ -15,7 +15,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from gyrecut.proportions.dimensions import Dimensions
-    from gyrecut.proportions.division import Bed
+    from gyrecut.proportions.printing import Bed
     from gyrecut.solids import Parts
 
 AS_IT_STANDS = Location((0.0, 0.0, 0.0))
@@ -81,9 +81,7 @@ def make_pieces(
     yield piece("bin-ring", "ring on the bin's lid", parts.bin_ring, AS_IT_STANDS)
 
 
-def _named(
-    name: str, title: str, solids: tuple[Solid, ...]
-) -> Iterator[tuple[str, str, Solid]]:
+def _named(name: str, title: str, solids: tuple[Solid, ...]) -> Iterator[tuple[str, str, Solid]]:
     if len(solids) == 1:
         yield name, title, solids[0]
         return

@@ -16,7 +16,7 @@ if TYPE_CHECKING:
     from cadquery.func import Solid
     from numpy.typing import NDArray
 
-    from gyrecut.proportions.division import Bed
+    from gyrecut.proportions.printing import Bed
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -61,14 +61,22 @@ def ring_sectors(solid: Solid, ring: Ring, body: Body, joint: Joint) -> tuple[So
         start = ring.first_cut + index * step
         end = start + step
         wedge = revolved(
-            (0.0, low), (FAR, low), (FAR, high), (0.0, high),
-            first=start - half_lap + half_gap, last=end + half_lap - half_gap,
+            (0.0, low),
+            (FAR, low),
+            (FAR, high),
+            (0.0, high),
+            first=start - half_lap + half_gap,
+            last=end + half_lap - half_gap,
         )
         # the inner tongue stays at the far end, the outer one at the near end
         inner = _half_wall(body, low, high, joint.clearance_mm / 2, inside=True)
         outer = _half_wall(body, low, high, -joint.clearance_mm / 2, inside=False)
-        take_inner = revolved(*inner, first=start - half_lap - half_gap, last=start + half_lap + half_gap)
-        take_outer = revolved(*outer, first=end - half_lap - half_gap, last=end + half_lap + half_gap)
+        take_inner = revolved(
+            *inner, first=start - half_lap - half_gap, last=start + half_lap + half_gap
+        )
+        take_outer = revolved(
+            *outer, first=end - half_lap - half_gap, last=end + half_lap + half_gap
+        )
         what = f"sector {index + 1} of {ring.sectors}"
         sectors.append(
             sound(what, without(what, common(what, solid, wedge), take_inner, take_outer))
@@ -89,7 +97,13 @@ def _half_wall(
 
 
 def plate_sectors(
-    solid: Solid, *, sectors: int, first_cut: float, thickness_mm: float, gap_mm: float, slope: float
+    solid: Solid,
+    *,
+    sectors: int,
+    first_cut: float,
+    thickness_mm: float,
+    gap_mm: float,
+    slope: float,
 ) -> tuple[Solid, ...]:
     """Cut a plate lying on z = 0 into sectors with tongue and groove.
 
@@ -119,8 +133,11 @@ def plate_sectors(
         end = start + step
         what = f"lid sector {index + 1} of {sectors}"
         wedge = prism(
-            (0.0, 0.0), polar(FAR, start), (polar(FAR, start + step / 2), polar(FAR, end)),
-            bottom=-BEYOND, top=thickness_mm + BEYOND,
+            (0.0, 0.0),
+            polar(FAR, start),
+            (polar(FAR, start + step / 2), polar(FAR, end)),
+            bottom=-BEYOND,
+            top=thickness_mm + BEYOND,
         )
         # seams are planes shifted by half the gap to either side of the cut
         wedge = wedge.moved(

@@ -1,0 +1,1 @@
+"""From a stage of a profile to every dimension of its separator, in millimetres; no CAD."""

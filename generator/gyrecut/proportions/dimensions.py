@@ -57,9 +57,7 @@ class Body:
         """Radius of the outside at the height `z_mm`, continued beyond both ends."""
         below = -self.barrel_height_mm - z_mm
         slanted = (
-            self.radius_mm
-            + self.wall_mm / cos(self.half_angle)
-            - below * tan(self.half_angle)
+            self.radius_mm + self.wall_mm / cos(self.half_angle) - below * tan(self.half_angle)
         )
         return min(self.outer_radius_mm, slanted)
 
@@ -83,9 +81,9 @@ class Body:
             return on_barrel
         lean = tan(self.half_angle)
         slanted = self.radius_mm + self.wall_mm / cos(self.half_angle)
-        return (
-            slanted + lean * self.barrel_height_mm - radius_mm + z_mm * tan(slope)
-        ) / (tan(slope) - lean)
+        return (slanted + lean * self.barrel_height_mm - radius_mm + z_mm * tan(slope)) / (
+            tan(slope) - lean
+        )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -154,6 +152,7 @@ class Portal:
     peak_width_mm: float
     shoulder_mm: float
     floor_mm: float
+    edge_mm: float
     frame_low_y_mm: float
     frame_high_y_mm: float
     frame_bottom_z_mm: float
@@ -187,7 +186,8 @@ class Portal:
 class Cuff:
     """A tapered end for a hose.
 
-    `fit` is "over" where the hose goes over the cuff, "inside" where it goes into it.
+    `fit` is "over" where the hose goes over the cuff, "inside" where it goes into it. The ramp
+    is the sloped shoulder below the root for the one, the floor of the socket for the other.
     """
 
     fit: str
@@ -202,7 +202,7 @@ class Cuff:
 
     @property
     def height_mm(self) -> float:
-        """Height of the cuff with the ramp of its shoulder."""
+        """Height of the cuff with its ramp."""
         return self.length_mm + self.ramp_mm
 
     @property

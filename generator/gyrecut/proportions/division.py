@@ -15,21 +15,13 @@ if TYPE_CHECKING:
     from numpy.typing import NDArray
 
     from gyrecut.proportions.dimensions import Body, Joint, Portal, Rim
+    from gyrecut.proportions.printing import Bed
 
 MOST_SECTORS = 12
 ARC_STEPS = 24
 TURNS = np.deg2rad(np.arange(0.0, 180.0, 1.0))
 SPARE_MM = 0.5
 KEEL_LAND_MM = 2.0  # width the cut keel stands on
-
-
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Bed:
-    """What the printer leaves for one piece: its build volume less the margins."""
-
-    width_mm: float
-    depth_mm: float
-    height_mm: float
 
 
 def best_turn(outline_mm: NDArray[np.float64], bed: Bed) -> tuple[float, bool]:
@@ -47,13 +39,11 @@ def best_turn(outline_mm: NDArray[np.float64], bed: Bed) -> tuple[float, bool]:
     tuple of (float, bool)
         The turn [rad] that leaves most room, and whether it fits there.
     """
-    turned_x = np.outer(np.cos(TURNS), outline_mm[:, 0]) - np.outer(
-        np.sin(TURNS), outline_mm[:, 1]
+    turned_x = np.outer(np.cos(TURNS), outline_mm[:, 0]) - np.outer(np.sin(TURNS), outline_mm[:, 1])
+    turned_y = np.outer(np.sin(TURNS), outline_mm[:, 0]) + np.outer(np.cos(TURNS), outline_mm[:, 1])
+    fill = np.maximum(
+        np.ptp(turned_x, axis=1) / bed.width_mm, np.ptp(turned_y, axis=1) / bed.depth_mm
     )
-    turned_y = np.outer(np.sin(TURNS), outline_mm[:, 0]) + np.outer(
-        np.cos(TURNS), outline_mm[:, 1]
-    )
-    fill = np.maximum(np.ptp(turned_x, axis=1) / bed.width_mm, np.ptp(turned_y, axis=1) / bed.depth_mm)
     best = int(np.argmin(fill))
     return float(TURNS[best]), bool(fill[best] <= 1.0)
 
@@ -128,7 +118,7 @@ def slot_arc(body: Body, portal: Portal) -> tuple[float, float]:
     """Angles [rad] between which slot and portal stand out of the barrel."""
     low_y = portal.frame_low_y_mm
     return (
-        atan2(portal.frame_high_y_mm, 0.0) - SPARE_MM / body.radius_mm,
+        atan2(portal.frame_high_y_mm, 0.0) - portal.screws.boss_mm / 2 / body.radius_mm,
         atan2(low_y, portal.face_x_mm) % (2 * pi),
     )
 
@@ -182,29 +172,37 @@ def divide(
     UnbuildableError
         Where a ring, a sector or the slot does not fit the printer.
     """
-    heights = _cut_heights(body=body, portal=portal, joint=joint, bed=bed, slope=slope)
+    top = _top_plan(body, portal, rim, joint)
+    heights = _cut_heights(
+        body=body,
+        portal=portal,
+        joint=joint,
+        bed=bed,
+        slope=slope,
+        # a sector with the portal would tip over on its arc alone: let it stand on the keel
+        on_keel=not best_turn(_outline(top, 0.0, 2 * pi), bed)[1],
+    )
     rings = []
     tops = (0.0, *heights)
     bottoms = (*heights, -body.total_height_mm)
     stagger = 0.0
-    for index, (top, bottom) in enumerate(zip(tops, bottoms, strict=True)):
-        plan = _ring_plan(body, joint, top) if index else _top_plan(body, portal, rim, joint)
+    for index, (high, low) in enumerate(zip(tops, bottoms, strict=True)):
+        plan = _ring_plan(body, joint, high) if index else top
         found = _sectors(plan, bed, stagger)
         if found is None:
             raise _too_wide(f"ring {index + 1} of the body", plan, bed)
         count, first = found
         # half a sector on, so that no seam stands above the next
         stagger = first + pi / count
-        rings.append(Ring(top_mm=top, bottom_mm=bottom, sectors=count, first_cut=first))
-    plan = _top_plan(body, portal, rim, joint)
-    found = _sectors(plan, bed, rings[0].first_cut + pi / max(rings[0].sectors, 2) / 2)
+        rings.append(Ring(top_mm=high, bottom_mm=low, sectors=count, first_cut=first))
+    found = _sectors(top, bed, rings[0].first_cut + pi / max(rings[0].sectors, 2) / 2)
     if found is None:
-        raise _too_wide("the lid", plan, bed)
+        raise _too_wide("the lid", top, bed)
     return Division(rings=tuple(rings), lid_sectors=found[0], lid_first_cut=found[1])
 
 
 def _cut_heights(
-    *, body: Body, portal: Portal, joint: Joint, bed: Bed, slope: float
+    *, body: Body, portal: Portal, joint: Joint, bed: Bed, slope: float, on_keel: bool
 ) -> tuple[float, ...]:
     """Heights of the ring cuts from the top down."""
     total = body.total_height_mm
@@ -221,8 +219,14 @@ def _cut_heights(
     for rest in range(1, ceil(total / max(usable, 1.0)) + 2):
         even = (total + rest * joint.lap_mm) / (rest + 1)
         first = _clear_of_keel(
-            min(max(even, least), bed.height_mm), least,
-            body=body, portal=portal, joint=joint, bed=bed, slope=slope,
+            min(max(even, least), bed.height_mm),
+            least,
+            body=body,
+            portal=portal,
+            joint=joint,
+            bed=bed,
+            slope=slope,
+            on_keel=on_keel,
         )
         if first is None:
             continue
@@ -236,7 +240,15 @@ def _cut_heights(
 
 
 def _clear_of_keel(
-    depth: float, least: float, *, body: Body, portal: Portal, joint: Joint, bed: Bed, slope: float
+    depth: float,
+    least: float,
+    *,
+    body: Body,
+    portal: Portal,
+    joint: Joint,
+    bed: Bed,
+    slope: float,
+    on_keel: bool,
 ) -> float | None:
     """Depth of the first cut nearest to `depth` at which keel and socket do not spoil each other.
 
@@ -249,10 +261,10 @@ def _clear_of_keel(
     groove = joint.collar_mm + 2 * joint.clearance_mm + KEEL_LAND_MM
     through_keel = keel - groove / tan(slope)
     choices = []
-    if below_keel <= bed.height_mm:
-        choices.append(max(depth, below_keel))
     if through_keel >= least:
         choices.append(min(depth, through_keel))
+    if below_keel <= bed.height_mm and not (on_keel and choices):
+        choices.append(max(depth, below_keel))
     return min(choices, key=lambda choice: abs(choice - depth), default=None)
 
 
@@ -266,6 +278,6 @@ def _too_wide(what: str, plan: _Plan, bed: Bed) -> UnbuildableError:
     )
     return UnbuildableError(
         f"{what} reaches {max(span, plan.radius_mm):.0f} mm from the axis{whole}; no sector of it "
-        f"fits the {bed.width_mm:.0f} x {bed.depth_mm:.0f} mm the bed leaves; choose a smaller body "
-        "or a larger printer.build_volume"
+        f"fits the {bed.width_mm:.0f} x {bed.depth_mm:.0f} mm the bed leaves; choose a smaller "
+        "body or a larger printer.build_volume"
     )

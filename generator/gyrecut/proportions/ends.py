@@ -159,14 +159,16 @@ def bell_mouth(*, finder: Finder, throat_mm: float, joint: Joint) -> BellMouth:
 def bin_ring(*, body: Body, joint: Joint, fastener: str, lid_thickness_mm: float) -> BinRing:
     """Proportion the ring on the bin's lid, screws outside its socket."""
     row = screws(fastener, ())
-    socket = (
-        body.outside_radius_at(-body.total_height_mm + joint.lap_mm)
-        + (joint.clearance_mm + joint.collar_mm) / cos(body.half_angle)
-    )
+    socket = body.outside_radius_at(-body.total_height_mm + joint.lap_mm) + (
+        joint.clearance_mm + joint.collar_mm
+    ) / cos(body.half_angle)
     circle = socket + row.boss_mm / 2
     count = max(4, len(spread(0.0, 2 * pi * circle, PITCH_SPARE_MM)) - 1)
     places = tuple(
-        (circle * cos(2 * pi * k / count + pi / count), circle * sin(2 * pi * k / count + pi / count))
+        (
+            circle * cos(2 * pi * k / count + pi / count),
+            circle * sin(2 * pi * k / count + pi / count),
+        )
         for k in range(count)
     )
     return BinRing(

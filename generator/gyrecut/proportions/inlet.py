@@ -53,10 +53,11 @@ def hose_cuff(
         tip, root = mating - CUFF_TIP_UNDER_MM, mating + CUFF_ROOT_OVER_MM
         bore = tip - 2 * wall_mm
         shoulder = CUFF_SHOULDER_MM
+        ramp = shoulder / tan(slope)
     else:
         tip, root = mating + CUFF_ROOT_OVER_MM, mating - CUFF_TIP_UNDER_MM
         bore = root - 2 * SOCKET_LEDGE_MM
-        shoulder = 0.0
+        shoulder, ramp = 0.0, wall_mm
     if bore < mating / 2:
         raise UnbuildableError(
             f"hose of {mating:g} mm: a cuff wall of {wall_mm:g} mm leaves a bore of {bore:.1f} mm; "
@@ -71,7 +72,7 @@ def hose_cuff(
         length_mm=length,
         wall_mm=wall_mm,
         shoulder_mm=shoulder,
-        ramp_mm=shoulder / tan(slope),
+        ramp_mm=ramp,
     )
 
 
@@ -84,6 +85,7 @@ def portal(
     fastener: str,
     slope: float,
     bridge_limit_mm: float,
+    edge_mm: float,
 ) -> Portal:
     """Proportion the framed mouth in front of the slot.
 
@@ -104,6 +106,8 @@ def portal(
         Steepest lean from the vertical [rad].
     bridge_limit_mm : float
         Longest bridge the printer makes [mm]; the gable's flat peak uses most of it.
+    edge_mm : float
+        Thickness left where the slot's inner wall ends at the barrel's bore [mm].
 
     Returns
     -------
@@ -160,6 +164,7 @@ def portal(
         peak_width_mm=min(peak, width),
         shoulder_mm=-lintel - max(rise, 0.0),
         floor_mm=-a,
+        edge_mm=edge_mm,
         frame_low_y_mm=low,
         frame_high_y_mm=high_jamb + boss / 2,
         frame_bottom_z_mm=sill - boss / 2,

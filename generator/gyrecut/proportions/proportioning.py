@@ -10,7 +10,7 @@ from gyrecut.correlations.geometry import CycloneGeometry, body_diameter_for_inl
 from gyrecut.correlations.lapple import body_diameter_for_cut_size_lapple
 from gyrecut.errors import UnbuildableError
 from gyrecut.proportions.dimensions import Body, Dimensions, Joint, Slot
-from gyrecut.proportions.division import Bed, divide
+from gyrecut.proportions.division import divide
 from gyrecut.proportions.ends import (
     bell_mouth,
     bin_ring,
@@ -22,14 +22,17 @@ from gyrecut.proportions.ends import (
 )
 from gyrecut.proportions.fasteners import MM
 from gyrecut.proportions.inlet import hose_cuff, portal, transition
+from gyrecut.proportions.printing import bed_of, smallest_wall_mm
 
 if TYPE_CHECKING:
     from gyrecut.airflow.air import AirState
+    from gyrecut.airflow.ranges import Numbers
     from gyrecut.catalogue.rows import Dust
+    from gyrecut.profile.models import Profile, Stage
     from gyrecut.proportions.dimensions import BellMouth, Cuff, Finder, OutletCuff
-    from gyrecut.profile import Profile, Stage
 
 SLOPE_SPARE = radians(1.0)  # facets of a mesh lean a little more than the surface they stand for
+EDGE_SHARE = 0.75  # of the wall is left at the slot's inner edge
 SMALLEST_BODY_MM, LARGEST_BODY_MM = 40.0, 900.0
 FIT_STEP = 0.98  # two sizes tried one after the other differ by this factor
 
@@ -61,13 +64,6 @@ def geometry_of(d: Dimensions) -> CycloneGeometry:
         total_height=d.body.total_height_mm / MM,
         dust_outlet_diameter=d.body.dust_outlet_diameter_mm / MM,
     )
-
-
-def bed_of(profile: Profile) -> Bed:
-    """What the profile's printer leaves for one piece, in millimetres."""
-    x, y, z = profile.printer.build_volume
-    margin = profile.printer.margin
-    return Bed(width_mm=(x - 2 * margin) * MM, depth_mm=(y - 2 * margin) * MM, height_mm=(z - margin) * MM)
 
 
 def proportion(profile: Profile, stage: Stage, *, air: AirState, dust: Dust) -> Dimensions:
@@ -103,9 +99,7 @@ def proportion(profile: Profile, stage: Stage, *, air: AirState, dust: Dust) -> 
         diameter = stage.body_diameter
     elif stage.inlet_velocity is not None:
         diameter = float(
-            body_diameter_for_inlet_velocity(
-                shape, inlet_velocity=stage.inlet_velocity, flow=flow
-            )
+            body_diameter_for_inlet_velocity(shape, inlet_velocity=stage.inlet_velocity, flow=flow)
         )
     elif stage.cut_size is not None:
         diameter = float(
@@ -151,16 +145,17 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
     printer, fastener = profile.printer, profile.joints.fastener
     wall = profile.walls.body * MM
     slope = printer.overhang_limit - SLOPE_SPARE
-    bed = bed_of(profile)
+    bed = bed_of(printer)
     body = Body(
         diameter_mm=diameter_mm,
-        barrel_height_mm=shape.barrel_height * diameter_mm,
-        total_height_mm=shape.total_height * diameter_mm,
-        dust_outlet_diameter_mm=shape.dust_outlet_diameter * diameter_mm,
+        barrel_height_mm=_times(shape.barrel_height, diameter_mm),
+        total_height_mm=_times(shape.total_height, diameter_mm),
+        dust_outlet_diameter_mm=_times(shape.dust_outlet_diameter, diameter_mm),
         wall_mm=wall,
     )
     slot = Slot(
-        height_mm=shape.slot_height * diameter_mm, width_mm=shape.slot_width * diameter_mm
+        height_mm=_times(shape.slot_height, diameter_mm),
+        width_mm=_times(shape.slot_width, diameter_mm),
     )
     joint = Joint(
         lap_mm=profile.joints.lap * MM, clearance_mm=printer.clearance * MM, collar_mm=wall
@@ -181,12 +176,13 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         fastener=fastener,
         slope=slope,
         bridge_limit_mm=printer.bridge_limit * MM,
+        edge_mm=max(EDGE_SHARE * wall, smallest_wall_mm(printer)),
     )
     flange = rim(body=body, portal=mouth, fastener=fastener, slope=slope)
     tube = finder(
         body=body,
-        bore_mm=shape.finder_diameter * diameter_mm,
-        length_mm=shape.finder_length * diameter_mm,
+        bore_mm=_times(shape.finder_diameter, diameter_mm),
+        length_mm=_times(shape.finder_length, diameter_mm),
         stub_mm=joint.lap_mm,
     )
     roof = lid(thickness_mm=profile.walls.lid * MM, finder=tube, joint=joint)
@@ -205,16 +201,17 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         ),
         outlet=_outlet(profile, tube, joint, slope),
         joint=joint,
-        division=divide(
-            body=body, portal=mouth, rim=flange, joint=joint, bed=bed, slope=slope
-        ),
+        division=divide(body=body, portal=mouth, rim=flange, joint=joint, bed=bed, slope=slope),
         slope=slope,
     )
 
 
-def _outlet(
-    profile: Profile, tube: Finder, joint: Joint, slope: float
-) -> OutletCuff | BellMouth:
+def _times(ratio: Numbers, diameter_mm: float) -> float:
+    """Give one length of one body; a shape may hold arrays, a separator does not."""
+    return float(ratio) * diameter_mm
+
+
+def _outlet(profile: Profile, tube: Finder, joint: Joint, slope: float) -> OutletCuff | BellMouth:
     outlet = profile.outlet
     if outlet.kind == "blower":
         return bell_mouth(finder=tube, throat_mm=outlet.intake_diameter * MM, joint=joint)

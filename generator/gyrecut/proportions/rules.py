@@ -15,6 +15,8 @@ from gyrecut.correlations.geometry import mean_inlet_velocity
 from gyrecut.correlations.natural_length import natural_length_alexander
 from gyrecut.correlations.saltation import REENTRAINMENT_RATIO, saltation_velocity_kalen_zenz
 from gyrecut.findings import Finding, Severity
+from gyrecut.proportions.dimensions import OutletCuff
+from gyrecut.proportions.printing import bed_of, smallest_wall_mm
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
@@ -22,7 +24,9 @@ if TYPE_CHECKING:
     from gyrecut.airflow.air import AirState
     from gyrecut.catalogue.rows import Dust
     from gyrecut.correlations.geometry import CycloneGeometry
+    from gyrecut.profile.models import Printer
     from gyrecut.proportions.dimensions import Dimensions
+    from gyrecut.proportions.printing import Bed
 
 # usable window of inlet velocities: Koch and Licht 1977, from memory
 SLOWEST_INLET, FASTEST_INLET = 10.0, 27.0
@@ -40,6 +44,7 @@ def geometry_rules(
     dust: Dust,
     feed: float | None,
     hose_flow: float,
+    printer: Printer,
 ) -> tuple[Finding, ...]:
     """Hold one body against the rules of the field.
 
@@ -59,6 +64,8 @@ def geometry_rules(
         Dust that arrives at this body [kg/s].
     hose_flow : float
         Air in the hose that leads to it [m3/s].
+    printer : Printer
+        The profile's printer.
 
     Returns
     -------
@@ -73,6 +80,8 @@ def geometry_rules(
         *_hose(d, hose_flow, dust),
         *_dust_outlet(d, dust, feed),
         *_transition(d),
+        *_laps(d, smallest_wall_mm(printer)),
+        *_round_pieces(d, bed_of(printer)),
     )
 
 
@@ -251,3 +260,47 @@ def _transition(d: Dimensions) -> Iterator[Finding]:
             where="included angle between hose and slot",
             fix="A taller printer, a wider hose or a smaller slot makes it slimmer.",
         )
+
+
+def _laps(d: Dimensions, smallest_mm: float) -> Iterator[Finding]:
+    half = (d.body.wall_mm - d.joint.clearance_mm) / 2
+    if any(ring.sectors > 1 for ring in d.division.rings) and half < smallest_mm:
+        yield Finding(
+            code="lap-too-thin",
+            severity=Severity.STOP,
+            part="body",
+            what="The rings are cut into sectors, and half of the wall is too thin for their laps.",
+            measured=half,
+            limit=smallest_mm,
+            unit="mm",
+            where="half of walls.body less the clearance",
+            fix=f"Give a walls.body of at least {2 * smallest_mm + d.joint.clearance_mm:.2f} mm.",
+        )
+
+
+def _round_pieces(d: Dimensions, bed: Bed) -> Iterator[Finding]:
+    out = d.outlet
+    below = out.socket_mm if isinstance(out, OutletCuff) else out.plug_length_mm
+    across = out.socket_radius_mm if isinstance(out, OutletCuff) else out.stop_radius_mm
+    rows = (
+        ("vortex finder", d.finder.collar_radius_mm, d.finder_top_mm + d.finder.length_mm),
+        ("outlet", across, d.outlet_top_mm - d.finder_top_mm + below),
+        ("bin ring", d.bin_ring.outer_radius_mm, d.bin_ring.thickness_mm + d.joint.lap_mm),
+    )
+    for part, radius, height in rows:
+        for measured, limit, where in (
+            (2 * radius, min(bed.width_mm, bed.depth_mm), "diameter"),
+            (height, bed.height_mm, "height"),
+        ):
+            if measured > limit:
+                yield Finding(
+                    code="piece-too-large",
+                    severity=Severity.STOP,
+                    part=part,
+                    what=f"The {part} is printed whole, and it does not fit the printer.",
+                    measured=measured,
+                    limit=limit,
+                    unit="mm",
+                    where=where,
+                    fix="Choose a smaller body, or a larger printer.build_volume.",
+                )

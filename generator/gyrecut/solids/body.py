@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from math import atan2, cos, pi, sin, sqrt, tan
+from math import acos, atan2, hypot, pi, sqrt, tan
 from typing import TYPE_CHECKING
 
 from gyrecut.solids.shapes import (
@@ -67,9 +67,7 @@ def _rim(d: Dimensions) -> Solid:
     outer, middle = d.body.outer_radius_mm, d.body.radius_mm + d.body.wall_mm / 2
     edge, thickness = d.rim.outer_radius_mm, d.rim.thickness_mm
     foot = -thickness - (edge - outer) / tan(d.slope)
-    return revolved(
-        (middle, foot), (outer, foot), (edge, -thickness), (edge, 0.0), (middle, 0.0)
-    )
+    return revolved((middle, foot), (outer, foot), (edge, -thickness), (edge, 0.0), (middle, 0.0))
 
 
 def _keel(d: Dimensions) -> Solid:
@@ -101,7 +99,9 @@ def _keel(d: Dimensions) -> Solid:
     foot = (body.outside_radius_at(d.keel_bottom_mm), d.keel_bottom_mm)
     inner.append((foot[0] - half_wall, foot[1]))
     slope_region = revolved(
-        *inner, foot, (far + BEYOND, portal.frame_bottom_z_mm + BEYOND / tan(d.slope)),
+        *inner,
+        foot,
+        (far + BEYOND, portal.frame_bottom_z_mm + BEYOND / tan(d.slope)),
         (far + BEYOND, 0.0),
     )
     return common("keel", joined("portal", duct, *solids), slope_region)
@@ -152,27 +152,45 @@ def _side_flanges(d: Dimensions) -> tuple[Solid, Solid]:
 
 
 def swirl_plan(d: Dimensions) -> tuple[Point, ...]:
-    """Plan of barrel and slot channel as one outline: corners and one arc, for `prism`."""
-    radius, width = d.body.radius_mm, d.slot.width_mm
-    channel_x = d.portal.face_x_mm + d.portal.depth_mm
-    return (
-        (channel_x, radius - d.portal.mouth_width_mm),
-        (channel_x, radius),
-        (0.0, radius),
-        (-sqrt(radius**2 - (radius - width) ** 2), radius - width),
-    )
+    """Plan of barrel and slot channel: five corners, the last two ends of the barrel's arc.
+
+    Where the channel's inner wall meets the bore it would end in a feather; it is cut off square
+    where it is as thick as the portal's edge.
+
+    Returns
+    -------
+    tuple of (float, float)
+        Inner and outer corner at the portal, tangent point, and the two corners of the cut edge:
+        on the bore, and on the channel's inner wall.
+    """
+    radius, portal = d.body.radius_mm, d.portal
+    channel_x = portal.face_x_mm + portal.depth_mm
+    corner = (channel_x, radius - portal.mouth_width_mm)
+    slot_x, slot_y = -sqrt(radius**2 - (radius - d.slot.width_mm) ** 2), radius - d.slot.width_mm
+    length = hypot(slot_x - corner[0], slot_y - corner[1])
+    normal = ((slot_y - corner[1]) / length, -(slot_x - corner[0]) / length)
+    depth = portal.edge_mm + normal[0] * slot_x + normal[1] * slot_y
+    on_bore = polar(radius, atan2(normal[1], normal[0]) - acos(depth / radius))
+    on_wall = (on_bore[0] - portal.edge_mm * normal[0], on_bore[1] - portal.edge_mm * normal[1])
+    return corner, (channel_x, radius), (0.0, radius), on_bore, on_wall
 
 
 def _air_tools(d: Dimensions) -> tuple[Solid, ...]:
-    """What the air takes out of the barrel: inside, slot channel, mouth."""
+    """Give what the air takes out of the barrel: inside, slot channel, mouth."""
     body, portal, floor = d.body, d.portal, -d.slot.height_mm
     radius = body.radius_mm
-    corner, start, tangent, slot_edge = swirl_plan(d)
+    corner, start, tangent, on_bore, on_wall = swirl_plan(d)
     # clockwise from the tangent point, the long way round to the slot's inner edge
-    end_angle = atan2(slot_edge[1], slot_edge[0]) % (2 * pi)
+    end_angle = atan2(on_bore[1], on_bore[0]) % (2 * pi)
     half_way = (pi / 2 + end_angle - 2 * pi) / 2
     swirl = prism(
-        corner, start, tangent, (polar(radius, half_way), slot_edge), bottom=floor, top=BEYOND
+        corner,
+        start,
+        tangent,
+        (polar(radius, half_way), on_bore),
+        on_wall,
+        bottom=floor,
+        top=BEYOND,
     )
     below = revolved(
         (0.0, -body.total_height_mm),
@@ -192,9 +210,7 @@ def _air_tools(d: Dimensions) -> tuple[Solid, ...]:
 def _insert_holes(d: Dimensions) -> tuple[Solid, ...]:
     rim, portal = d.rim.screws, d.portal.screws
     return (
-        *upright_holes(
-            rim.places_mm, rim.insert_hole_mm, bottom=-rim.insert_depth_mm, top=BEYOND
-        ),
+        *upright_holes(rim.places_mm, rim.insert_hole_mm, bottom=-rim.insert_depth_mm, top=BEYOND),
         *holes_along_x(
             portal.places_mm,
             portal.insert_hole_mm,

@@ -39,7 +39,8 @@ def cuff_inside(cuff: Cuff, root_z: float) -> tuple[Point, ...]:
     if cuff.fit == "inside":
         return (
             (cuff.tip_diameter_mm / 2, tip_z),
-            (cuff.root_diameter_mm / 2, root_z),
+            (cuff.root_diameter_mm / 2, root_z + cuff.ramp_mm),
+            (bore, root_z + cuff.ramp_mm),
             (bore, root_z),
         )
     return ((bore, tip_z), (bore, root_z))

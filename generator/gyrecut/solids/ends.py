@@ -41,7 +41,10 @@ def bin_ring(d: Dimensions) -> Solid:
             "bin ring",
             joined("bin ring", plate, collar(d.body, d.joint, seat, gusset=None)),
             *upright_holes(
-                screws.places_mm, screws.clearance_hole_mm, bottom=bottom - BEYOND, top=seat + BEYOND
+                screws.places_mm,
+                screws.clearance_hole_mm,
+                bottom=bottom - BEYOND,
+                top=seat + BEYOND,
             ),
         ),
     )
@@ -60,7 +63,7 @@ def outlet(d: Dimensions) -> Solid:
         In machine coordinates.
     """
     if isinstance(d.outlet, BellMouth):
-        return sound("bell-mouth", revolved(*_bell_mouth_outline(d.outlet, d.finder_top_mm, d.slope)))
+        return sound("bell-mouth", _bell_mouth(d.outlet, d.finder_top_mm, d.slope))
     return sound("outlet", revolved(*_cuff_outline(d.outlet, d, d.finder_top_mm)))
 
 
@@ -79,7 +82,7 @@ def _cuff_outline(out: OutletCuff, d: Dimensions, seat: float) -> tuple[Point, .
     )
 
 
-def _bell_mouth_outline(bell: BellMouth, seat: float, slope: float) -> tuple[Point | Arc, ...]:
+def _bell_mouth(bell: BellMouth, seat: float, slope: float) -> Solid:
     """Plug and rounding below the stub's end, stop and spigot above."""
     throat, rounding = bell.throat_mm / 2, bell.rounding_mm
     spigot, bottom = bell.spigot_radius_mm, seat - bell.plug_length_mm
@@ -90,7 +93,7 @@ def _bell_mouth_outline(bell: BellMouth, seat: float, slope: float) -> tuple[Poi
         (throat + rounding - rounding * cos(eighth), bottom + rounding - rounding * sin(eighth)),
         (throat, bottom + rounding),
     )
-    return (
+    return revolved(
         (throat + rounding, bottom),
         arc,
         (throat, end),

@@ -39,7 +39,9 @@ def lid(d: Dimensions) -> Solid:
         "lid",
         plate,
         hole,
-        *upright_holes(screws.places_mm, screws.clearance_hole_mm, bottom=-BEYOND, top=top + BEYOND),
+        *upright_holes(
+            screws.places_mm, screws.clearance_hole_mm, bottom=-BEYOND, top=top + BEYOND
+        ),
     )
     return sound("lid", drilled)
 

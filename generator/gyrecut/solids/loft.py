@@ -1,4 +1,4 @@
-"""A duct from a convex polygon to a circle made of what sheet metal could be: triangles and cones."""
+"""A duct from a convex polygon to a circle, of plane triangles and patches of cones."""
 
 from __future__ import annotations
 
@@ -8,10 +8,10 @@ from typing import TYPE_CHECKING
 from cadquery import func
 from cadquery.func import Edge, Face, Solid, Vector
 from OCP.BRepBuilderAPI import BRepBuilderAPI_MakeFace
+from OCP.GC import GC_MakeArcOfCircle
 from OCP.Geom import Geom_BSplineCurve
 from OCP.GeomConvert import GeomConvert
 from OCP.GeomFill import GeomFill
-from OCP.GC import GC_MakeArcOfCircle
 from OCP.gp import gp_Pnt
 from OCP.TColgp import TColgp_Array1OfPnt
 from OCP.TColStd import TColStd_Array1OfInteger, TColStd_Array1OfReal

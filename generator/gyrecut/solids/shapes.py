@@ -46,7 +46,9 @@ def revolved(
     -------
     Solid
     """
-    outline = func.face(func.wire(*_edges(start, steps, lambda point: Vector(point[0], 0, point[1]))))
+    outline = func.face(
+        func.wire(*_edges(start, steps, lambda point: Vector(point[0], 0, point[1])))
+    )
     turned = func.revolve(outline, (0, 0, 0), (0, 0, 1), degrees(last - first))
     if first:
         turned = turned.moved(rz=degrees(first))
@@ -72,8 +74,12 @@ def prism_along_x(*corners: Point, start: float, end: float) -> Solid:
 def block(low: tuple[float, float, float], high: tuple[float, float, float]) -> Solid:
     """Give the box between two corners."""
     return prism(
-        (low[0], low[1]), (high[0], low[1]), (high[0], high[1]), (low[0], high[1]),
-        bottom=low[2], top=high[2],
+        (low[0], low[1]),
+        (high[0], low[1]),
+        (high[0], high[1]),
+        (low[0], high[1]),
+        bottom=low[2],
+        top=high[2],
     )
 
 
@@ -81,9 +87,7 @@ def upright_holes(
     places: Sequence[Point], diameter: float, *, bottom: float, top: float
 ) -> list[Solid]:
     """Cylinders for holes along z at (x, y) places."""
-    return [
-        Solid.makeCylinder(diameter / 2, top - bottom, Vector(x, y, bottom)) for x, y in places
-    ]
+    return [Solid.makeCylinder(diameter / 2, top - bottom, Vector(x, y, bottom)) for x, y in places]
 
 
 def holes_along_x(
@@ -124,7 +128,7 @@ def one_solid(shape: Shape, what: str) -> Solid:
     if len(solids) != 1:
         raise BuildError(f"{what}: came out as {len(solids)} solids, not one")
     solid = solids[0]
-    if not isinstance(solid, Solid) or solid.Volume() <= 0:
+    if solid.Volume() <= 0:
         raise BuildError(f"{what}: came out empty or inside out")
     return solid
 

@@ -70,9 +70,7 @@ def transition_place(d: Dimensions) -> Location:
     """Where the transition's own frame stands in the machine."""
     y, z = mouth_centre(d.portal, d.body)
     return Location(
-        Plane(
-            origin=(d.portal.face_x_mm, y, z), xDir=(0.0, -1.0, 0.0), normal=(-1.0, 0.0, 0.0)
-        )
+        Plane(origin=(d.portal.face_x_mm, y, z), xDir=(0.0, -1.0, 0.0), normal=(-1.0, 0.0, 0.0))
     )
 
 
