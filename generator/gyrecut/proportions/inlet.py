@@ -20,7 +20,7 @@ CUFF_SHOULDER_MM = 1.5  # step the hose stops at
 SOCKET_LEDGE_MM = 2.0  # step a hose end stops at inside the cuff
 CUFF_SHORTEST_MM = 25.0
 CUFF_REACH = 0.7  # engagement over diameter, 0.6 to 1.0: common practice, no source
-LARGEST_AREA_RATIO = 4.0  # hose to slot, either way: beyond it the transition is no duct
+LARGEST_AREA_RATIO = 6.0  # hose to slot, either way: beyond it the transition is no duct
 LINTEL_LEAST_MM = 5.0
 
 
@@ -239,7 +239,7 @@ def transition(
     if not 1 / LARGEST_AREA_RATIO <= hose_area / slot_area <= LARGEST_AREA_RATIO:
         raise UnbuildableError(
             f"air.hose.nominal: the cuff's bore of {cuff.bore_mm:.1f} mm has {hose_area:.0f} mm2, "
-            f"the slot {slot_area:.0f} mm2; allowed is a ratio of {1 / LARGEST_AREA_RATIO:g} to "
+            f"the slot {slot_area:.0f} mm2; allowed is a ratio of {1 / LARGEST_AREA_RATIO:.2g} to "
             f"{LARGEST_AREA_RATIO:g}; choose another hose, flow or inlet velocity"
         )
     radius = cuff.bore_mm / 2
