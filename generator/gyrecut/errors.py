@@ -54,6 +54,25 @@ class BuildError(GyrecutError):
 
 
 class UnbuildableError(GyrecutError):
-    """The profile is well formed, but no body can be made from it."""
+    """The profile is well formed, but no body can be made from it.
+
+    Parameters
+    ----------
+    key : tuple of str or int
+        The profile's key to change first, such as ("air", "hose", "nominal").
+    what : str
+        What is wrong, as the rest of a sentence that begins with the key.
+    given, allowed, fix : str
+        What the profile comes to, what may be, what to do.
+    """
 
     exit_code = PROFILE_INVALID
+
+    def __init__(
+        self, *, key: tuple[str | int, ...], what: str, given: str, allowed: str, fix: str
+    ) -> None:
+        self.key, self.what = key, what
+        self.given, self.allowed, self.fix = given, allowed, fix
+        super().__init__(
+            f"{'.'.join(map(str, key))} {what}; given: {given}; allowed: {allowed}; do: {fix}"
+        )

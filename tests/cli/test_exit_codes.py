@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import json
 import os
 import re
 import signal
@@ -175,9 +176,10 @@ def test_70_for_a_number_json_cannot_hold(run: Run, profile: Path) -> None:
     assert run("size", profile, "--json", mishap="not_a_number").returncode == 70
 
 
-def test_130_on_ctrl_c(profile: Path, tmp_path: Path) -> None:
+@pytest.mark.parametrize("form", [[], ["--json"]])
+def test_130_on_ctrl_c(profile: Path, tmp_path: Path, form: list[str]) -> None:
     with subprocess.Popen(
-        command_line("build", profile, mishap="long_build"),
+        command_line("build", profile, *form, mishap="long_build"),
         cwd=tmp_path,
         env=clean_environment(),
         stdout=subprocess.PIPE,
@@ -188,7 +190,11 @@ def test_130_on_ctrl_c(profile: Path, tmp_path: Path) -> None:
         assert process.stderr.readline() == "solids: 0 of 2\n"
         process.send_signal(signal.SIGINT)
         out, err = process.communicate(timeout=30)
-    assert (process.returncode, out, err) == (130, "", "gyrecut: stopped by Ctrl-C\n")
+    assert (process.returncode, err) == (130, "gyrecut: stopped by Ctrl-C\n")
+    if form:
+        assert json.loads(out)["error"]["kind"] == "interrupted"
+    else:
+        assert out == ""
 
 
 def test_130_in_a_real_build_leaves_the_earlier_kit(

@@ -8,19 +8,21 @@ from dataclasses import dataclass
 from functools import cache
 from pathlib import Path
 from tempfile import mkdtemp
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
-import cadquery
 import lib3mf
 import numpy as np
 import pytest
 import trimesh
 from cadquery import func, importers
+from cadquery.func import Shape, Solid
 
 from gyrecut import pipeline
 from gyrecut.findings import Finding, Severity
 from gyrecut.profile import load_profile, profile_hash
-from gyrecut.profile.models import Profile
+
+if TYPE_CHECKING:
+    from gyrecut.profile.models import Profile
 
 PROFILES = Path(__file__).parents[2] / "profiles"
 SHIPPED = sorted(path.stem for path in PROFILES.glob("*.yaml"))
@@ -51,9 +53,7 @@ def built(name: str) -> Built:
     profile = load_profile(PROFILES / f"{name}.yaml")
     told: list[tuple[str, int, int]] = []
     design = pipeline.design(profile)
-    result = pipeline.build(
-        design, Path(mkdtemp()) / name, lambda *further: told.append(further)
-    )
+    result = pipeline.build(design, Path(mkdtemp()) / name, lambda *further: told.append(further))
     return Built(
         profile=profile,
         design=design,
@@ -68,8 +68,14 @@ def kit(request: pytest.FixtureRequest) -> Built:
     return built(request.param)
 
 
-def read_step(path: Path) -> cadquery.Shape:
-    return importers.importStep(str(path)).combine().val()
+def solids_in(path: Path) -> list[Solid]:
+    shapes = importers.importStep(str(path)).vals()
+    return [solid for shape in shapes if isinstance(shape, Shape) for solid in shape.Solids()]
+
+
+def read_step(path: Path) -> Solid:
+    (solid,) = solids_in(path)
+    return solid
 
 
 def test_three_profiles_ship() -> None:
@@ -138,8 +144,7 @@ def test_step_of_each_piece_is_the_printed_solid(kit: Built) -> None:
 def test_assembly_holds_every_piece_where_it_sits(kit: Built) -> None:
     text = (kit.folder / "assembly.step").read_text()
     assert "SI_UNIT(.MILLI.,.METRE.)" in text
-    assembly = importers.importStep(str(kit.folder / "assembly.step")).vals()
-    solids = [solid for shape in assembly for solid in shape.Solids()]
+    solids = solids_in(kit.folder / "assembly.step")
     assert len(solids) == len(kit.pieces)
     for piece in kit.pieces:
         assert f"'{piece['name']}'" in text
@@ -155,11 +160,7 @@ def test_step_and_placed_piece_agree_both_ways() -> None:
     # one piece, the other way too: nothing lost, nothing gained between posed and placed
     kit = built("luthier-sander")
     posed = read_step(kit.folder / "pieces" / "transition.step")
-    solids = [
-        solid
-        for shape in importers.importStep(str(kit.folder / "assembly.step")).vals()
-        for solid in shape.Solids()
-    ]
+    solids = solids_in(kit.folder / "assembly.step")
     (placed,) = [s for s in solids if s.Volume() == pytest.approx(posed.Volume(), rel=1e-9)]
     import gyrecut.solids.transition as made  # noqa: PLC0415 - the place it is turned by
 
@@ -197,7 +198,12 @@ def test_print_job_holds_every_piece_closed(kit: Built) -> None:
 def test_summary_says_what_to_do(kit: Built) -> None:
     text = (kit.folder / "summary.md").read_text()
     assert text.startswith(f"# {kit.profile.name}: can be built")
-    for heading in ("## Pieces to print", "## What to buy", "## How it goes together", "## Cautions"):
+    for heading in (
+        "## Pieces to print",
+        "## What to buy",
+        "## How it goes together",
+        "## Cautions",
+    ):
         assert heading in text
     assert "First estimate" in text
 

@@ -6,12 +6,12 @@ from dataclasses import replace
 from typing import TYPE_CHECKING
 
 import pytest
+from tests.proportions.conftest import with_hose, with_printer, with_stage
 
 from gyrecut import pipeline
 from gyrecut.findings import Finding, Severity
 from gyrecut.proportions import rules
 from gyrecut.proportions.printing import Bed
-from tests.proportions.conftest import with_hose, with_printer, with_stage
 
 if TYPE_CHECKING:
     from gyrecut.profile import Profile
@@ -31,7 +31,9 @@ def test_a_shipped_profile_breaks_no_rule(each: Profile) -> None:
 
 def test_slot_that_aims_at_the_finder(luthier: Profile) -> None:
     # the high-throughput shape: b = 0.375 D, and (D - De) / 2 = 0.125 D
-    finding = found(with_stage(luthier, body_diameter=0.12, proportions="stairmand-high-throughput"))
+    finding = found(
+        with_stage(luthier, body_diameter=0.12, proportions="stairmand-high-throughput")
+    )
     assert finding["slot-aims-at-finder"].measured == pytest.approx(45.0)
     assert finding["slot-aims-at-finder"].limit == pytest.approx(15.0 - 2.4)
     assert finding["slot-aims-at-finder"].severity is Severity.WARN
@@ -99,7 +101,12 @@ def test_piece_printed_whole_that_does_not_fit(luthier: Profile) -> None:
 
 @pytest.mark.parametrize(
     ("limit", "value", "unit"),
-    [("pressure_drop", 500.0, "Pa"), ("height", 0.5, "mm"), ("cut_size", 1e-6, "um"), ("pieces", 3, "")],
+    [
+        ("pressure_drop", 500.0, "Pa"),
+        ("height", 0.5, "mm"),
+        ("cut_size", 1e-6, "um"),
+        ("pieces", 3, ""),
+    ],
 )
 def test_the_profiles_own_limits(luthier: Profile, limit: str, value: float, unit: str) -> None:
     limits = luthier.limits.model_copy(update={limit: value})

@@ -2,16 +2,17 @@
 
 from __future__ import annotations
 
+import itertools
 from math import pi, sqrt
 from typing import TYPE_CHECKING
 
 import pytest
+from tests.proportions.conftest import dimensions_of, with_hose, with_printer, with_stage
 
 from gyrecut.catalogue import families
 from gyrecut.correlations.lapple import cut_size_lapple
 from gyrecut.errors import UnbuildableError
 from gyrecut.proportions.proportioning import geometry_of
-from tests.proportions.conftest import dimensions_of, with_hose, with_printer, with_stage
 
 if TYPE_CHECKING:
     from gyrecut.profile import Profile
@@ -123,7 +124,7 @@ def test_rings_cover_the_body_and_fit_the_printer(each: Profile) -> None:
     rings = d.division.rings
     assert rings[0].top_mm == 0.0
     assert rings[-1].bottom_mm == pytest.approx(-d.body.total_height_mm)
-    for above, below in zip(rings, rings[1:], strict=False):
+    for above, below in itertools.pairwise(rings):
         assert above.bottom_mm == below.top_mm
     tallest = (each.printer.build_volume[2] - each.printer.margin) * 1000
     assert rings[0].height_mm <= tallest

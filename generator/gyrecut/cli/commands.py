@@ -90,12 +90,12 @@ def new(
 @app.command()
 def size(profile: ProfilePath, as_json: AsJson = False, quiet: Quiet = False) -> Reply:
     """Say its size, its catch and its cost; nothing is built."""
-    from gyrecut import pipeline
+    from gyrecut.cli.designing import designed
     from gyrecut.cli.findings import exit_code_of
     from gyrecut.cli.size_report import show_design
     from gyrecut.profile import load_profile
 
-    design = pipeline.design(load_profile(profile))
+    design = designed(profile, load_profile(profile))
     code = exit_code_of(design.findings)
     if code == FINE:
         tell(f"When it suits you: gyrecut build {quote(str(profile))}", quiet=quiet)
@@ -121,6 +121,7 @@ def build(
     """Make the kit: STEP, STL and 3MF files, manifest and summary."""
     from gyrecut import pipeline
     from gyrecut.cli.build_report import kit_document, show_kit
+    from gyrecut.cli.designing import designed
     from gyrecut.cli.findings import exit_code_of
     from gyrecut.cli.progress import progress
     from gyrecut.cli.system import require_cad
@@ -130,7 +131,7 @@ def build(
     read = load_profile(profile)
     folder = out or Path("out", read.name)
     check_target(folder)
-    design = pipeline.design(read)
+    design = designed(profile, read)
     require_cad()
     with progress(quiet=quiet) as further:
         result = pipeline.build(design, folder, further)

@@ -32,3 +32,33 @@ PARTICLE_DIAMETER = Range(
     source="finite; the tail of a log-normal dust reaches any size",
 )
 CUT_SIZE = Range(quantity="cut size", low=1e-9, high=1e-2, unit="m", source=_SOURCE)
+TEMPERATURE = Range(
+    quantity="air temperature",
+    low=200.0,
+    high=400.0,
+    unit="K",
+    source="as far as the viscosity formula of this program",
+)
+# What divides by the density, or by a Reynolds number, needs some.
+REAL_AIR_DENSITY = Range(
+    quantity="air density",
+    low=0.2,
+    high=5.0,
+    unit="kg/m^3",
+    source="the formula divides by it; common practice, no source",
+)
+FRICTION = Range(quantity="wall friction factor", low=0.0, high=0.1, unit="-", source=_SOURCE)
+LOADING = Range(
+    quantity="dust in the air, by mass",
+    low=0.0,
+    high=10.0,
+    unit="-",
+    source="room around published tests, which end near 2; common practice, no source",
+)
+SLOT_OVER_RADIUS = Range(
+    quantity="slot width over body radius",
+    low=0.0,
+    high=1.0,
+    unit="-",
+    source="a wider slot reaches past the axis",
+)

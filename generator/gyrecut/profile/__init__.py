@@ -2,7 +2,7 @@
 
 from gyrecut.profile.models import Profile, profile_hash
 from gyrecut.profile.problems import Problem, ProfileError
-from gyrecut.profile.reading import load_profile
+from gyrecut.profile.reading import at_its_line, load_profile
 from gyrecut.profile.schema import profile_schema
 from gyrecut.profile.starter import starter_text
 
@@ -10,6 +10,7 @@ __all__ = [
     "Problem",
     "Profile",
     "ProfileError",
+    "at_its_line",
     "load_profile",
     "profile_hash",
     "profile_schema",

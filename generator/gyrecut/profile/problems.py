@@ -52,6 +52,7 @@ class Code(StrEnum):
     NOT_FOR_THIS_PRINTER = "P035"
     MATERIAL_NOT_FOR_PRINTER = "P036"
     NUMBER_OF_ITEMS = "P037"
+    UNBUILDABLE = "P090"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -7,9 +7,10 @@ from typing import TYPE_CHECKING
 
 from pydantic import ValidationError
 
+from gyrecut.errors import OutOfRangeError, UnbuildableError
 from gyrecut.profile.extending import with_extended
 from gyrecut.profile.models import Profile
-from gyrecut.profile.problems import Place, Problem, ProfileError
+from gyrecut.profile.problems import Code, Place, Problem, ProfileError
 
 if TYPE_CHECKING:
     from pathlib import Path
@@ -41,6 +42,53 @@ def load_profile(path: Path) -> Profile:
     if problems:
         raise ProfileError(problems)
     return profile
+
+
+def at_its_line(path: Path, wrong: UnbuildableError | OutOfRangeError) -> ProfileError:
+    """Tell at its line in the profile why nothing can be built from it.
+
+    Parameters
+    ----------
+    path : Path
+        The profile, read once before without a mistake.
+    wrong : UnbuildableError or OutOfRangeError
+        What the later work refused.
+
+    Returns
+    -------
+    ProfileError
+        With the one problem.
+    """
+    tree, _ = with_extended(path)
+    if isinstance(wrong, UnbuildableError):
+        key, what = wrong.key, wrong.what
+        given, allowed, fix = wrong.given, wrong.allowed, wrong.fix
+    else:
+        key, what = ("stages",), f"lead out of what published formulas cover, in the {wrong.quantity}"
+        given = f"{wrong.value:g} {wrong.unit}".replace(" -", "")
+        allowed = f"{wrong.low:g} to {wrong.high:g} {wrong.unit} ({wrong.source})".replace(
+            " - ", " "
+        )
+        fix = "change the proportions, the size or the flow"
+    branch = tree
+    for part in key:
+        below = branch.below(part)
+        if below is None:
+            break
+        branch = below
+    return ProfileError(
+        [
+            Problem(
+                code=Code.UNBUILDABLE,
+                place=branch.key or branch.place,
+                path=_path_text(key),
+                what=what,
+                given=given,
+                allowed=allowed,
+                fix=fix,
+            )
+        ]
+    )
 
 
 def _problem(tree: Branch, error: ErrorDetails) -> Problem:

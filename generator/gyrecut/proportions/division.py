@@ -211,9 +211,11 @@ def _cut_heights(
     least = -portal.frame_bottom_z_mm + joint.lap_mm + joint.clearance_mm + SPARE_MM
     if least > bed.height_mm:
         raise UnbuildableError(
-            f"slot and portal need a ring of {least:.0f} mm, the printer leaves "
-            f"{bed.height_mm:.0f} mm of height; choose a smaller body, a family with a lower slot, "
-            "or a taller printer.build_volume"
+            key=("printer", "build_volume"),
+            what="is too low for the ring with slot and portal, which stays whole",
+            given=f"{bed.height_mm:.0f} mm of height",
+            allowed=f"at least {least:.0f} mm",
+            fix="choose a smaller body, a family with a lower slot, or a taller printer",
         )
     usable = bed.height_mm - joint.lap_mm
     for rest in range(1, ceil(total / max(usable, 1.0)) + 2):
@@ -234,8 +236,11 @@ def _cut_heights(
         if height <= usable and height > 2 * joint.lap_mm:
             return tuple(-first - height * k for k in range(rest))
     raise UnbuildableError(
-        f"no way to cut a body of {total:.0f} mm for a printer that leaves {bed.height_mm:.0f} mm "
-        "of height; choose another body or printer.build_volume"
+        key=("printer", "build_volume"),
+        what="leaves no way to cut the body into rings",
+        given=f"{bed.height_mm:.0f} mm of height, and a body of {total:.0f} mm",
+        allowed=f"a first ring of at least {least:.0f} mm, clear of the keel under the slot",
+        fix="choose another size of the stage, or a taller printer",
     )
 
 
@@ -271,13 +276,16 @@ def _clear_of_keel(
 def _too_wide(what: str, plan: _Plan, bed: Bed) -> UnbuildableError:
     span = max((hypot(*corner) for corner in plan.corners_mm), default=-inf)
     whole = (
-        f", and slot and portal ({degrees(plan.keep_whole[1] - plan.keep_whole[0]):.0f} degrees of "
-        "it) stay whole"
+        f", {degrees(plan.keep_whole[1] - plan.keep_whole[0]):.0f} degrees of it (slot and portal) "
+        "in one piece"
         if plan.keep_whole
         else ""
     )
     return UnbuildableError(
-        f"{what} reaches {max(span, plan.radius_mm):.0f} mm from the axis{whole}; no sector of it "
-        f"fits the {bed.width_mm:.0f} x {bed.depth_mm:.0f} mm the bed leaves; choose a smaller "
-        "body or a larger printer.build_volume"
+        key=("printer", "build_volume"),
+        what=f"is too small for any sector of {what}",
+        given=f"a bed that leaves {bed.width_mm:.0f} x {bed.depth_mm:.0f} mm",
+        allowed=f"room for a piece that reaches {max(span, plan.radius_mm):.0f} mm from the "
+        f"axis{whole}",
+        fix="choose a smaller body, or a larger printer",
     )

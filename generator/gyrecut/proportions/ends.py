@@ -139,9 +139,11 @@ def bell_mouth(*, finder: Finder, throat_mm: float, joint: Joint) -> BellMouth:
     if rounding < BELL_ROUNDING_LEAST * throat_mm:
         largest = (plug - lip) / (0.5 + BELL_ROUNDING_LEAST)
         raise UnbuildableError(
-            f"outlet.intake_diameter is {throat_mm:g} mm; the finder's bore of "
-            f"{finder.bore_mm:.1f} mm allows at most {largest:.0f} mm with a rounded edge; choose "
-            "a smaller blower intake or a larger body"
+            key=("outlet", "intake_diameter"),
+            what="is too wide for the vortex finder it sits in",
+            given=f"{throat_mm:.1f} mm, with a finder of {finder.bore_mm:.1f} mm",
+            allowed=f"at most {largest:.1f} mm, so that its edge can be rounded",
+            fix="choose a smaller blower intake, or a larger body",
         )
     return BellMouth(
         throat_mm=throat_mm,

@@ -60,8 +60,11 @@ def hose_cuff(
         shoulder, ramp = 0.0, wall_mm
     if bore < mating / 2:
         raise UnbuildableError(
-            f"hose of {mating:g} mm: a cuff wall of {wall_mm:g} mm leaves a bore of {bore:.1f} mm; "
-            "allowed at least half the hose; give a thinner walls.body or a larger hose"
+            key=("walls", "body"),
+            what=f"leaves too little of a hose of {mating:g} mm",
+            given=f"{wall_mm:g} mm, which leaves a bore of {bore:.1f} mm",
+            allowed=f"a bore of at least {mating / 2:.1f} mm",
+            fix="give a thinner wall, or a wider hose",
         )
     return Cuff(
         fit=fit,
@@ -126,9 +129,12 @@ def portal(
     rise = (width - peak) / 2 / tan(slope)
     if not 0 < lintel + rise < 0.9 * a or width >= 2 * radius:
         raise UnbuildableError(
-            f"the slot of {a:.1f} x {b:.1f} mm is too small for a printed mouth of equal area "
-            f"under a lintel of {lintel:.1f} mm; choose a larger body, a lower inlet velocity, a "
-            "family with a taller slot, or a thinner walls.body"
+            key=("stages",),
+            what="give a slot too small for a printed mouth of its area",
+            given=f"a slot of {a:.1f} x {b:.1f} mm",
+            allowed=f"room for a lintel of {lintel:.1f} mm and a gable at the printer's slope",
+            fix="choose a larger body, a lower inlet_velocity, a family with a taller slot, or a "
+            "thinner walls.body",
         )
     boss, head = row.boss_mm, row.head_diameter_mm
     beside = max(
@@ -140,8 +146,11 @@ def portal(
     highest = -(row.insert_depth_mm + boss / 2 + wall)
     if highest - sill < boss:
         raise UnbuildableError(
-            f"the slot is {a:.1f} mm tall: too low for screws {row.thread} beside it; "
-            "choose a larger body or a thinner joints.fastener"
+            key=("joints", "fastener"),
+            what="is too large for the screws beside the slot",
+            given=f"{row.thread}, and a slot {a:.1f} mm tall",
+            allowed=f"two of them, one above the other, {boss:g} mm apart",
+            fix="choose a thinner fastener, or a larger body",
         )
     jambs = spread(highest, sill, PITCH_SPARE_MM)
     between = spread(low_jamb, high_jamb, PITCH_SPARE_MM)[1:-1]
@@ -238,9 +247,11 @@ def transition(
     hose_area, slot_area = pi / 4 * cuff.bore_mm**2, slot.height_mm * slot.width_mm
     if not 1 / LARGEST_AREA_RATIO <= hose_area / slot_area <= LARGEST_AREA_RATIO:
         raise UnbuildableError(
-            f"air.hose.nominal: the cuff's bore of {cuff.bore_mm:.1f} mm has {hose_area:.0f} mm2, "
-            f"the slot {slot_area:.0f} mm2; allowed is a ratio of {1 / LARGEST_AREA_RATIO:.2g} to "
-            f"{LARGEST_AREA_RATIO:g}; choose another hose, flow or inlet velocity"
+            key=("air", "hose", "nominal"),
+            what=f"is too {'wide' if hose_area > slot_area else 'narrow'} for the slot",
+            given=f"{hose_area:.0f} mm2 in the cuff, {slot_area:.0f} mm2 in the slot",
+            allowed=f"one at most {LARGEST_AREA_RATIO:g} times the other",
+            fix="choose another hose, or another size of the stage",
         )
     radius = cuff.bore_mm / 2
     run = longest_run(portal, body, radius)
@@ -255,9 +266,11 @@ def transition(
     length = float(min(ceil(ideal), room))
     if room <= flange or length < run / tan(slope):
         raise UnbuildableError(
-            f"the transition needs {run / tan(slope) + cuff.height_mm:.0f} mm of height with its "
-            f"cuff, the printer leaves {tallest_mm:.0f} mm; choose a smaller hose or body, or a "
-            "taller printer.build_volume"
+            key=("printer", "build_volume"),
+            what="is too low for the transition from hose to slot",
+            given=f"{tallest_mm:.0f} mm of height",
+            allowed=f"at least {max(run / tan(slope), flange) + cuff.height_mm:.0f} mm",
+            fix="choose a smaller hose or body, or a taller printer",
         )
     return Transition(
         flange_thickness_mm=flange,

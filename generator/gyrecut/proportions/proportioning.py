@@ -113,7 +113,7 @@ def proportion(profile: Profile, stage: Stage, *, air: AirState, dust: Dust) -> 
             )
         )
     else:
-        raise UnbuildableError("the stage has nothing to take its size from")
+        raise ValueError("a stage without a size; profiles are checked for it")
     return _proportion_at(profile, shape, round(diameter * MM, 1))
 
 
@@ -129,18 +129,24 @@ def _largest_that_fits(profile: Profile, shape: CycloneGeometry, pieces: int) ->
             if dimensions.division.piece_count <= pieces:
                 return dimensions
         diameter *= FIT_STEP
-    why = f"; the smallest body fails because {reason}" if reason else ""
     raise UnbuildableError(
-        f"no body of {SMALLEST_BODY_MM:g} to {LARGEST_BODY_MM:g} mm comes out of this printer in "
-        f"{pieces} pieces or fewer; give a larger fit_pieces{why}"
+        key=("stages",),
+        what="ask for a body in fewer pieces than this printer can make",
+        given=f"fit_pieces: {pieces}",
+        allowed=f"as many as some body of {SMALLEST_BODY_MM:g} to {LARGEST_BODY_MM:g} mm needs",
+        fix="give a larger fit_pieces"
+        + (f"; the smallest body fails too: {reason}" if reason else ""),
     )
 
 
 def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float) -> Dimensions:
     if not SMALLEST_BODY_MM <= diameter_mm <= LARGEST_BODY_MM:
         raise UnbuildableError(
-            f"the body comes out at {diameter_mm:g} mm; allowed {SMALLEST_BODY_MM:g} to "
-            f"{LARGEST_BODY_MM:g} mm; choose another flow, inlet velocity or cut size"
+            key=("stages",),
+            what="lead to a body of no useful size",
+            given=f"{diameter_mm:g} mm across",
+            allowed=f"{SMALLEST_BODY_MM:g} mm to {LARGEST_BODY_MM:g} mm",
+            fix="choose another flow, inlet_velocity, cut_size or count",
         )
     printer, fastener = profile.printer, profile.joints.fastener
     wall = profile.walls.body * MM
