@@ -187,9 +187,7 @@ def barth(
     in_finder = mean_finder_velocity(geometry, flow=flow)
     half_density = air_density / 2.0
     body_loss = half_density * (without_friction**2 - at_core**2) / radius_ratio
-    core_loss = half_density * (
-        at_core**2 + lip_loss * np.cbrt(at_core**4 * in_finder**2)
-    )
+    core_loss = half_density * (at_core**2 + lip_loss * np.cbrt(at_core**4 * in_finder**2))
     return BarthResult(
         cut_size=cut_size_on_core(
             flow=flow,

@@ -19,9 +19,7 @@ SLOPE = Range(
 )
 
 
-def grade_efficiency_with_slope(
-    diameter: Numbers, *, cut_size: Numbers, slope: Numbers
-) -> Numbers:
+def grade_efficiency_with_slope(diameter: Numbers, *, cut_size: Numbers, slope: Numbers) -> Numbers:
     r"""Share of the particles of one size that is kept.
 
     .. math:: \eta = \frac{1}{1 + (d_{50}/d)^m}

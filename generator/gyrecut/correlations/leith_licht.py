@@ -113,8 +113,7 @@ def vortex_exponent_alexander(geometry: CycloneGeometry, *, temperature: Numbers
     TEMPERATURE.check(temperature)
     exponent: Numbers = (
         1.0
-        - (1.0 - 0.67 * geometry.body_diameter**0.14)
-        * (temperature / REFERENCE_TEMPERATURE) ** 0.3
+        - (1.0 - 0.67 * geometry.body_diameter**0.14) * (temperature / REFERENCE_TEMPERATURE) ** 0.3
     )
     return exponent
 

@@ -58,7 +58,9 @@ STRAND_DENSITY = Range(
     unit="kg/m^3",
     source="about 0.4 of the bulk density; the ends are common practice, no source",
 )
-SHARE = Range(quantity="share of the dust kept", low=0.0, high=1.0, unit="-", source="by definition")
+SHARE = Range(
+    quantity="share of the dust kept", low=0.0, high=1.0, unit="-", source="by definition"
+)
 DUCT_VELOCITY = Range(
     quantity="velocity in the inlet duct",
     low=0.0,
@@ -348,9 +350,7 @@ def muschelknautz(
             break
 
     half_density = air_density / 2.0
-    body_loss = (
-        friction * area * half_density * (at_wall * at_core) ** 1.5 / (MAIN_FLOW * flow)
-    )
+    body_loss = friction * area * half_density * (at_wall * at_core) ** 1.5 / (MAIN_FLOW * flow)
     core_loss = half_density * (
         2.0 * in_finder**2 + at_core**2 + 3.0 * np.cbrt(at_core**4 * in_finder**2)
     )

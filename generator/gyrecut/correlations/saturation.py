@@ -68,9 +68,7 @@ def saturation_loading_muschelknautz(
     return carried
 
 
-def share_skimmed_muschelknautz(
-    *, cut_size: Numbers, median: Numbers, loading: Numbers
-) -> Numbers:
+def share_skimmed_muschelknautz(*, cut_size: Numbers, median: Numbers, loading: Numbers) -> Numbers:
     r"""Share of the dust that falls out at the inlet, whatever its size: an upper estimate.
 
     .. math:: s = \max(0, 1 - c_L / c_0)
