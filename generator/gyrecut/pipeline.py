@@ -8,7 +8,7 @@ from math import pi
 from typing import TYPE_CHECKING, Any
 
 from gyrecut import __version__
-from gyrecut.airflow.air import air_state
+from gyrecut.airflow.air import air_state, air_state_at_pressure
 from gyrecut.catalogue import fasteners, polymers
 from gyrecut.kit.assembly import hardware, steps
 from gyrecut.kit.contents import KitContents, Polymer
@@ -20,8 +20,13 @@ from gyrecut.profile.models import profile_hash
 from gyrecut.proportions.printing import bed_of
 from gyrecut.proportions.proportioning import geometry_of, proportion
 from gyrecut.proportions.rules import geometry_rules
+from gyrecut.separation.answers import answers_to
+from gyrecut.separation.chain import Step
+from gyrecut.separation.forecast import forecast
 from gyrecut.separation.limits import Totals, limit_findings
-from gyrecut.separation.prediction import first_prediction
+from gyrecut.separation.outlook import outlook_findings, sizing_flow
+from gyrecut.separation.sizes import sizes_of
+from gyrecut.separation.uncertainty import Doubt
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Iterator
@@ -34,7 +39,8 @@ if TYPE_CHECKING:
     from gyrecut.kit.contents import KitPiece
     from gyrecut.profile import Profile
     from gyrecut.proportions.dimensions import Dimensions
-    from gyrecut.separation.prediction import FirstPrediction
+    from gyrecut.separation.answers import Answer
+    from gyrecut.separation.forecast import Forecast, StageForecast
 
     Progress = Callable[[str, int, int], None]
 
@@ -51,7 +57,7 @@ class StageDesign:
     flow: float
     dimensions: Dimensions
     geometry: CycloneGeometry
-    prediction: FirstPrediction
+    forecast: StageForecast
 
     @property
     def piece_count(self) -> int:
@@ -67,6 +73,8 @@ class Design:
     air: AirState
     dust: Dust
     stages: tuple[StageDesign, ...]
+    forecast: Forecast
+    answers: tuple[Answer, ...]
     findings: tuple[Finding, ...]
 
     def as_document(self) -> dict[str, Any]:
@@ -82,10 +90,11 @@ class Design:
                     "copies": stage.copies,
                     "flow": stage.flow,
                     "dimensions": plain(stage.dimensions),
-                    "prediction": plain(stage.prediction),
                 }
                 for stage in self.stages
             ],
+            "forecast": plain(self.forecast),
+            "answers": plain(self.answers),
             "findings": plain(self.findings),
         }
 
@@ -115,59 +124,87 @@ def design(profile: Profile) -> Design:
     UnbuildableError, OutOfRangeError
         Where no separator can be made from the profile.
     """
-    air = air_state(
-        profile.air.temperature,
-        altitude=profile.air.altitude,
-        relative_humidity=profile.air.relative_humidity,
-    )
+    air = _air_of(profile)
     dust = dust_of(profile.dust)
-    stages: list[StageDesign] = []
-    findings: list[Finding] = []
-    for number, stage in enumerate(profile.stages, start=1):
-        flow = profile.air.flow / stage.count
-        dimensions = proportion(profile, stage, air=air, dust=dust)
-        geometry = geometry_of(dimensions)
-        prediction = first_prediction(
-            geometry,
-            flow=flow,
-            air=air,
-            particle_density=dust.particle_density,
-            median=dust.median,
-            spread=dust.spread,
+    target = sizing_flow(profile, dust=dust, air=air)
+    bodies = tuple(
+        proportion(profile, stage, flow=target / stage.count, air=air, dust=dust)
+        for stage in profile.stages
+    )
+    steps = tuple(
+        Step(geometry=geometry_of(body), copies=stage.count)
+        for body, stage in zip(bodies, profile.stages, strict=True)
+    )
+    sizes = sizes_of(profile.dust, dust)
+    expected = forecast(
+        profile,
+        air=air,
+        dust=dust,
+        sizes=sizes,
+        stages=tuple(zip(steps, bodies, strict=True)),
+        flow=target,
+        doubt=Doubt(),
+    )
+    stages = tuple(
+        StageDesign(
+            number=number,
+            copies=step.copies,
+            flow=said.flow,
+            dimensions=body,
+            geometry=step.geometry,
+            forecast=said,
         )
-        feed = profile.dust.feed
+        for number, (step, body, said) in enumerate(
+            zip(steps, bodies, expected.stages, strict=True), start=1
+        )
+    )
+    findings: list[Finding] = []
+    arriving = profile.dust.feed
+    for stage in stages:
         findings += geometry_rules(
-            dimensions,
-            geometry,
-            flow=flow,
+            stage.dimensions,
+            stage.geometry,
+            flow=stage.flow,
             air=air,
             dust=dust,
-            feed=None if feed is None else feed / stage.count,
-            hose_flow=flow,
+            feed=None if arriving is None else arriving / stage.copies,
+            hose_flow=expected.flow if stage.number == 1 else None,
             printer=profile.printer,
         )
-        stages.append(
-            StageDesign(
-                number=number,
-                copies=stage.count,
-                flow=flow,
-                dimensions=dimensions,
-                geometry=geometry,
-                prediction=prediction,
-            )
-        )
+        if arriving is not None:
+            arriving *= 1 - stage.forecast.kept_of_arriving
+    findings += outlook_findings(expected, dust=dust, leak=profile.air.bin_leak)
     findings += limit_findings(profile.limits, _totals(profile, stages))
     return Design(
-        profile=profile, air=air, dust=dust, stages=tuple(stages), findings=tuple(findings)
+        profile=profile,
+        air=air,
+        dust=dust,
+        stages=stages,
+        forecast=expected,
+        answers=tuple(
+            answers_to(profile.limits, expected, steps=steps, dust=dust, sizes=sizes, air=air)
+        ),
+        findings=tuple(findings),
     )
 
 
-def _totals(profile: Profile, stages: list[StageDesign]) -> Totals:
+def _air_of(profile: Profile) -> AirState:
+    given = profile.air
+    if given.pressure is not None:
+        return air_state_at_pressure(
+            given.temperature, pressure=given.pressure, relative_humidity=given.relative_humidity
+        )
+    return air_state(
+        given.temperature, altitude=given.altitude, relative_humidity=given.relative_humidity
+    )
+
+
+def _totals(profile: Profile, stages: tuple[StageDesign, ...]) -> Totals:
     bin_height = profile.bin.volume / (pi / 4 * profile.bin.mouth**2)
     return Totals(
-        pressure_drop=sum(stage.prediction.pressure_drop_shepherd_lapple for stage in stages),
+        pressure_drop=sum(stage.forecast.pressure_drop.central for stage in stages),
         height=bin_height + max(stage.dimensions.overall_height_mm for stage in stages) / MM,
-        cut_size=min(stage.prediction.cut_size_lapple for stage in stages),
+        cut_size=min(stage.forecast.cut_size.central for stage in stages),
         pieces=sum(stage.piece_count for stage in stages),
     )
 
@@ -247,17 +284,13 @@ def _contents(
         ),
         dust_is_combustible=design.dust.combustible,
         dimensions=[stage.dimensions for stage in design.stages],
-        prediction=[stage.prediction for stage in design.stages],
+        prediction=design.forecast,
         body=tuple(
             fact
             for stage in design.stages
             for fact in body_facts(stage.dimensions, _of(stage, several))
         ),
-        estimate=tuple(
-            fact
-            for stage in design.stages
-            for fact in estimate_facts(stage.prediction, _of(stage, several))
-        ),
+        estimate=tuple(estimate_facts(design.forecast)),
         findings=findings,
         pieces=pieces,
         hardware=tuple(

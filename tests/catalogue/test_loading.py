@@ -7,14 +7,26 @@ from typing import TYPE_CHECKING, Any
 
 import pytest
 
-from gyrecut.catalogue import CatalogueError, Hose, dusts, families, fasteners, hoses, polymers
+from gyrecut.catalogue import (
+    CatalogueError,
+    Hose,
+    dusts,
+    families,
+    fasteners,
+    filters,
+    hoses,
+    polymers,
+    sources,
+)
 from gyrecut.catalogue.loading import rows_from_text
 from gyrecut.catalogue.rows import Dust
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Mapping
 
-TABLES: list[Callable[[], Mapping[str, Any]]] = [families, dusts, polymers, hoses, fasteners]
+TABLES: list[Callable[[], Mapping[str, Any]]] = [
+    *(families, dusts, polymers, hoses, fasteners, sources, filters)
+]
 
 NAMES: dict[Callable[[], Mapping[str, Any]], list[str]] = {
     families: [
@@ -41,6 +53,18 @@ NAMES: dict[Callable[[], Mapping[str, Any]], list[str]] = {
     ],
     polymers: ["PLA", "PETG", "ABS", "ASA", "PC", "PA12", "resin-standard", "resin-tough"],
     fasteners: ["M3", "M4", "M5", "M6"],
+    sources: [
+        "bypass-motor-two-stage",
+        "shop-vacuum",
+        "extractor-small",
+        "extractor-large",
+        "side-channel-blower",
+        "on-board-blower",
+    ],
+    filters: [
+        *("L", "M", "H", "E10", "E11", "E12", "H13", "H14"),
+        *("MERV-8", "MERV-11", "MERV-13", "MERV-14", "MERV-15", "MERV-16"),
+    ],
 }
 
 
@@ -92,6 +116,47 @@ def test_a_dust_lies_looser_than_its_grains() -> None:
 
 def test_presets_say_that_they_are_invented() -> None:
     assert all(dust.source.startswith("Invented preset.") for dust in dusts().values())
+    invented = "Common practice, no source; illustrative."
+    assert all(source.source.startswith(invented) for source in sources().values())
+
+
+def test_every_number_says_whether_it_has_a_source() -> None:
+    assert all("common practice, no source" in row.source for row in filters().values())
+    for dust in dusts().values():
+        assert "Shape: " in dust.source
+        assert "Cake: " in dust.source
+
+
+def test_sources_have_the_size_of_such_machines() -> None:
+    # Common practice, no source: vacuum motors 15-25 kPa and 30-70 L/s, single-stage fans
+    # 1.5-2.5 kPa and 150-600 L/s, side-channel blowers 10-30 kPa.
+    for name, suctions, flows in (
+        ("bypass-motor-two-stage", (15e3, 25e3), (0.03, 0.07)),
+        ("shop-vacuum", (15e3, 25e3), (0.03, 0.07)),
+        ("extractor-small", (1.5e3, 2.5e3), (0.15, 0.6)),
+        ("extractor-large", (1.5e3, 2.5e3), (0.15, 0.6)),
+        ("side-channel-blower", (10e3, 30e3), (0.01, 0.2)),
+    ):
+        row = sources()[name]
+        assert suctions[0] <= row.shut_off <= suctions[1]
+        assert flows[0] <= row.open_flow <= flows[1]
+
+
+def test_a_filter_that_lets_less_through_resists_more() -> None:
+    for names in (("L", "M", "H"), ("E10", "E11", "E12", "H13", "H14")):
+        rows = [filters()[name] for name in names]
+        assert [row.penetration for row in rows] == sorted(
+            (row.penetration or 0.0 for row in rows), reverse=True
+        )
+        assert [row.clean_resistance for row in rows] == sorted(
+            row.clean_resistance for row in rows
+        )
+
+
+def test_grains_are_dragged_more_than_spheres() -> None:
+    # Hinds, Aerosol Technology, 2nd ed. 1999, table 3.2, from memory: from cube to talc.
+    for dust in dusts().values():
+        assert 1.08 <= dust.shape_factor <= 2.0
 
 
 GOOD_HOSE = '"38 mm":\n  nominal: 0.038\n  source: common practice\n'

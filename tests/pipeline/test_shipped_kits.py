@@ -111,8 +111,10 @@ def test_manifest_tells_the_design(kit: Built) -> None:
     assert manifest["profile"] == {"name": kit.profile.name, "hash": profile_hash(kit.profile)}
     body = kit.design.stages[0].dimensions.body
     assert manifest["dimensions"][0]["body"]["diameter_mm"] == body.diameter_mm
-    prediction = kit.design.stages[0].prediction
-    assert manifest["prediction"][0]["cut_size_lapple"] == prediction.cut_size_lapple
+    expected = kit.design.forecast
+    assert manifest["prediction"]["catch"]["kept"] == expected.catch.kept
+    cut = expected.stages[0].cut_size
+    assert manifest["prediction"]["stages"][0]["cut_size"]["central"] == cut.central
     assert [f["code"] for f in manifest["findings"]] == [f.code for f in kit.findings]
     assert sum(piece["copies"] for piece in kit.pieces) == kit.design.stages[0].piece_count
 
@@ -205,7 +207,7 @@ def test_summary_says_what_to_do(kit: Built) -> None:
         "## Cautions",
     ):
         assert heading in text
-    assert "First estimate" in text
+    assert "## What to expect" in text
 
 
 def test_progress_is_told_to_the_end(kit: Built) -> None:

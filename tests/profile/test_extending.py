@@ -9,7 +9,9 @@ from typing import TYPE_CHECKING
 import pytest
 
 from gyrecut.profile import load_profile, profile_hash
+from gyrecut.profile.air import OwnSource
 from gyrecut.profile.models import BlowerOutlet
+from gyrecut.profile.sizes import LogNormalSizes, RosinRammlerSizes
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Mapping
@@ -269,6 +271,40 @@ def test_another_kind_of_outlet_replaces_the_inherited_one(good: str, write: Wri
     write({"good.yaml": good, "own.yaml": own})
     assert load_profile(Path("own.yaml")).outlet == BlowerOutlet.model_validate(
         {"kind": "blower", "intake_diameter": "30 mm"}
+    )
+
+
+def test_another_curve_replaces_the_inherited_one_whole(good: str, write: Write) -> None:
+    ends = "source: {shut_off: 18 kPa, open_flow: 150 m3/h, exponent: 1.3}"
+    own = """\
+extends: good.yaml
+air: {source: {points: [{flow: 0 L/s, suction: 20 kPa}, {flow: 20 L/s, suction: 9 kPa}]}}
+"""
+    write({"good.yaml": good.replace("flow: 140 m3/h", ends), "own.yaml": own})
+    source = load_profile(Path("own.yaml")).air.source
+    assert isinstance(source, OwnSource)
+    assert source.points is not None
+    assert [(point.flow, point.suction) for point in source.points] == [(0, 20e3), (0.02, 9e3)]
+    assert source.shut_off is source.exponent is None
+
+
+def test_another_kind_of_distribution_replaces_the_inherited_one(good: str, write: Write) -> None:
+    of = "kind: hardwood-sanding\n  distribution: {kind: log-normal, median: 30 um, spread: 2.5}"
+    own = """\
+extends: good.yaml
+dust: {distribution: {kind: rosin-rammler, size: 50 um, exponent: 1.2}}
+"""
+    same = "extends: good.yaml\ndust: {distribution: {spread: 3}}\n"
+    write(
+        {"good.yaml": good.replace("kind: hardwood-sanding", of), "own.yaml": own, "b.yaml": same}
+    )
+    replaced = load_profile(Path("own.yaml")).dust.distribution
+    assert replaced == RosinRammlerSizes.model_validate(
+        {"kind": "rosin-rammler", "size": "50 um", "exponent": 1.2}
+    )
+    merged = load_profile(Path("b.yaml")).dust.distribution
+    assert merged == LogNormalSizes.model_validate(
+        {"kind": "log-normal", "median": "30 um", "spread": 3}
     )
 
 

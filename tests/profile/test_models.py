@@ -13,6 +13,7 @@ import pytest
 from pydantic import ValidationError
 
 from gyrecut.profile import Profile, ProfileError, load_profile, profile_hash, starter_text
+from gyrecut.profile.air import OwnSource
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Mapping
@@ -103,7 +104,12 @@ def test_the_starter_is_good_with_its_suggestions_taken_up(write: Write) -> None
     write({"first.yaml": text})
     profile = load_profile(Path("first.yaml"))
     assert profile.air.hose.measured == 0.0386
-    assert None not in profile.dust.model_dump().values()
+    assert None not in profile.dust.model_dump(exclude={"distribution"}).values()
+    assert profile.air.source == "shop-vacuum"
+    assert profile.air.pick_up is not None
+    assert profile.air.pick_up.diameter == 0.032
+    assert profile.air.filter is not None
+    assert (profile.air.filter.area, profile.air.filter.filter_class) == (0.5, "M")
 
 
 def test_the_starter_refuses_a_bad_name() -> None:
@@ -127,3 +133,31 @@ def test_the_unit_library_is_loaded_by_the_first_quantity_only() -> None:
         "p.profile_schema(); p.starter_text('a'); assert 'pint' not in sys.modules"
     )
     subprocess.run([sys.executable, "-c", code], check=True)
+
+
+def test_a_source_may_stand_in_for_the_flow(good: str, write: Write) -> None:
+    write({"source.yaml": good.replace("flow: 140 m3/h", "source: on-board-blower")})
+    air = load_profile(Path("source.yaml")).air
+    assert air.flow is None
+    assert air.source == "on-board-blower"
+
+
+def test_both_flow_and_source_may_be_given(good: str, write: Write) -> None:
+    ends = "source: {shut_off: 18 kPa, open_flow: 0.04 m3/s}"
+    write({"both.yaml": good.replace("flow: 140 m3/h", f"flow: 140 m3/h\n  {ends}")})
+    air = load_profile(Path("both.yaml")).air
+    assert isinstance(air.source, OwnSource)
+    assert (air.source.shut_off, air.source.open_flow, air.source.exponent) == (18e3, 0.04, None)
+    assert air.flow == pytest.approx(140 / 3600)
+
+
+def test_what_is_left_out_of_the_air_side_is_not_there(good: str, write: Write) -> None:
+    parts = "pick_up: {kind: hood}\n  filter: {area: 50 cm2, class: M}"
+    write({"parts.yaml": good.replace("flow: 140 m3/h", f"flow: 140 m3/h\n  {parts}")})
+    air = load_profile(Path("parts.yaml")).air
+    assert (air.source, air.pressure, air.bin_leak) == (None, None, 0.0)
+    assert air.pick_up is not None
+    assert (air.pick_up.diameter, air.pick_up.relief_area) == (None, 0.0)
+    assert air.filter is not None
+    assert (air.filter.position, air.filter.clean_loss, air.filter.limit) == ("suction", None, None)
+    assert air.filter.area == pytest.approx(0.005, rel=1e-15)

@@ -20,6 +20,7 @@ ALL_UNITS = [(dimension, unit) for dimension, units in UNITS.items() for unit in
 # inch of water is 249.0889 Pa in the same table; degC and degF are defined from the kelvin.
 DEFINED = {
     "mm": 1e-3, "cm": 1e-2, "m": 1.0, "um": 1e-6, "in": 0.0254, "ft": 0.3048,
+    "mm2": 1e-6, "cm2": 1e-4, "m2": 1.0, "in2": 0.0254**2, "ft2": 0.3048**2,
     "m3/h": 1 / 3600, "m3/min": 1 / 60, "m3/s": 1.0, "L/min": 1 / 60000, "L/s": 1e-3,
     "cfm": 0.3048**3 / 60,
     "Pa": 1.0, "kPa": 1e3, "mbar": 100.0, "inH2O": 249.0889,

@@ -40,7 +40,9 @@ def with_hose(profile: Profile, **changes: object) -> Profile:
 
 def dimensions_of(profile: Profile) -> Dimensions:
     air = air_state(293.15, altitude=0.0, relative_humidity=0.5)
-    return proportion(profile, profile.stages[0], air=air, dust=dust_of(profile.dust))
+    stage, flow = profile.stages[0], profile.air.flow
+    assert flow is not None
+    return proportion(profile, stage, flow=flow / stage.count, air=air, dust=dust_of(profile.dust))
 
 
 @pytest.fixture

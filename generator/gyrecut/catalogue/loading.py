@@ -12,12 +12,33 @@ from typing import TYPE_CHECKING, Any, TypeVar, get_args, get_type_hints
 from ruamel.yaml import YAML
 from ruamel.yaml.error import YAMLError
 
-from gyrecut.catalogue.rows import Dust, Family, Fastener, Hose, Polymer
+from gyrecut.catalogue.rows import (
+    BinMaterial,
+    Dust,
+    Family,
+    Fastener,
+    FilterClass,
+    Hose,
+    MeasuredPoint,
+    Polymer,
+    SuctionSource,
+)
 
 if TYPE_CHECKING:
     from collections.abc import Mapping
 
-Row = TypeVar("Row", Family, Dust, Polymer, Hose, Fastener)
+Row = TypeVar(
+    "Row",
+    Family,
+    Dust,
+    Polymer,
+    BinMaterial,
+    Hose,
+    Fastener,
+    MeasuredPoint,
+    SuctionSource,
+    FilterClass,
+)
 
 
 class CatalogueError(ValueError):
@@ -57,15 +78,39 @@ def polymers() -> Mapping[str, Polymer]:
 
 
 @cache
+def bin_materials() -> Mapping[str, BinMaterial]:
+    """Give the materials of bins by name, in the order of the table."""
+    return _shipped("bin_materials.yaml", BinMaterial)
+
+
+@cache
 def hoses() -> Mapping[str, Hose]:
     """Give the nominal hose sizes by name, in the order of the table."""
     return _shipped("hoses.yaml", Hose)
 
 
 @cache
+def sources() -> Mapping[str, SuctionSource]:
+    """Give the suction sources by name, in the order of the table."""
+    return _shipped("sources.yaml", SuctionSource)
+
+
+@cache
+def filters() -> Mapping[str, FilterClass]:
+    """Give the filter classes by name, in the order of the table."""
+    return _shipped("filters.yaml", FilterClass)
+
+
+@cache
 def fasteners() -> Mapping[str, Fastener]:
     """Give the screw sizes by name, in the order of the table."""
     return _shipped("fasteners.yaml", Fastener)
+
+
+@cache
+def measured_points() -> Mapping[str, MeasuredPoint]:
+    """Give the measured cyclones by name, in the order of the table."""
+    return _shipped("measured_points.yaml", MeasuredPoint)
 
 
 def rows_from_text(text: str, row_type: type[Row], *, table: str) -> Mapping[str, Row]:

@@ -54,6 +54,10 @@ class Dust:
         Geometric standard deviation of the log-normal mass distribution [-]
     largest_chip : float
         Longest piece to expect in the stream [m]
+    shape_factor : float
+        Drag of a grain over that of a sphere of its volume, the dynamic shape factor [-]
+    cake_resistance : float
+        Of a cake of 1 kg/m2 of the fines that pass a separator, on a filter [1/s]
     conveying_velocity : float
         Mean velocity in the hose that keeps it moving [m/s]
     combustible : bool
@@ -73,6 +77,8 @@ class Dust:
     median: float
     spread: float
     largest_chip: float
+    shape_factor: float
+    cake_resistance: float
     conveying_velocity: float
     combustible: bool
     exposure_limit: float | None
@@ -98,6 +104,14 @@ class Polymer:
         Tensile strength in the plane of a layer, and across layers [Pa]
     softening_temperature : float
         Deflection temperature at 0.45 MPa [K]
+    poisson_ratio : float
+        Sideways over lengthwise strain [-]
+    creep_ratio : float
+        Share of the modulus left after 100 to 1000 hours under a small load at 23 degC [-]
+    direction_ratio : float
+        Stiffness across layers over that along them [-]
+    service_temperature : float
+        Above which a part under load should not be kept [K]
     source : str
         Where the numbers come from.
     """
@@ -110,6 +124,45 @@ class Polymer:
     strength_along: float
     strength_across: float
     softening_temperature: float
+    poisson_ratio: float
+    creep_ratio: float
+    direction_ratio: float
+    service_temperature: float
+    source: str
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class BinMaterial:
+    """One material that bins are made of, with the low end of what it reaches.
+
+    Parameters
+    ----------
+    name, title : str
+        Name in a profile, and name for people.
+    form : {"round", "box"}
+        Whether bins of it are tubes or have flat walls.
+    density : float
+        Of the solid [kg/m^3]
+    modulus : float
+        Elastic modulus [Pa]
+    poisson_ratio : float
+        Sideways over lengthwise strain [-]
+    strength : float
+        Tensile or bending strength, or yield stress where it yields [Pa]
+    creep_ratio : float
+        Share of the modulus left after 100 to 1000 hours under a small load [-]
+    source : str
+        Where the numbers come from.
+    """
+
+    name: str
+    title: str
+    form: Literal["round", "box"]
+    density: float
+    modulus: float
+    poisson_ratio: float
+    strength: float
+    creep_ratio: float
     source: str
 
 
@@ -168,4 +221,134 @@ class Fastener:
     insert_hole: float
     insert_length: float
     boss_diameter: float
+    source: str
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class MeasuredPoint:
+    """One measured cyclone at one flow.
+
+    Parameters
+    ----------
+    name, title : str
+        Name in the table, and name for people.
+    grade : {"A", "B", "C"}
+        A: cut size read in its source; B: from memory, confirmed by a second number from memory;
+        C: from memory, unchecked. Only A and B may decide anything.
+    mark : {"read", "memory"}
+        How the cut size was come by.
+    source : str
+        Publication, and what else is known of the numbers.
+    body_diameter : float
+        Bore of the barrel [m]
+    inlet_bore : float or None
+        Bore of a round inlet [m], None where the inlet is a slot.
+    slot_height, slot_width : float or None
+        Inlet slot [m], None where the inlet is round.
+    finder_diameter, finder_length : float
+        Vortex finder: bore, and length below the roof [m]
+    barrel_height, total_height : float
+        Barrel alone, and barrel with cone [m]
+    dust_outlet_diameter : float
+        Opening at the foot of the cone [m]
+    flow : float
+        Volume flow [m^3/s]
+    particle_density, air_density : float
+        Of a grain and of the air [kg/m^3]
+    viscosity : float
+        Of the air [Pa*s]
+    temperature : float
+        Of the air [K]
+    diameter_kind : {"physical", "aerodynamic"}
+        Which diameter the cut size is; an aerodynamic one has its slip counted.
+    cut_size : float
+        Measured diameter caught by half [m]
+    cut_size_uncertainty : float or None
+        Largest error to expect, as a share of it [-], None where nothing is known of it.
+    inlet_velocity_heads : float or None
+        Measured pressure drop over the head of the inlet velocity [-], None where not measured.
+    """
+
+    name: str
+    title: str
+    grade: Literal["A", "B", "C"]
+    mark: Literal["read", "memory"]
+    source: str
+    body_diameter: float
+    inlet_bore: float | None
+    slot_height: float | None
+    slot_width: float | None
+    finder_diameter: float
+    finder_length: float
+    barrel_height: float
+    total_height: float
+    dust_outlet_diameter: float
+    flow: float
+    particle_density: float
+    air_density: float
+    viscosity: float
+    temperature: float
+    diameter_kind: Literal["physical", "aerodynamic"]
+    cut_size: float
+    cut_size_uncertainty: float | None
+    inlet_velocity_heads: float | None
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class SuctionSource:
+    """One kind of machine that moves the air, with an illustrative curve.
+
+    Parameters
+    ----------
+    name, title : str
+        Name in a profile, and name for people.
+    shut_off : float
+        Suction behind a blocked hose [Pa]
+    open_flow : float
+        Flow with nothing in its way [m^3/s]
+    exponent : float
+        How far the curve between them is bent outwards, 1 for a straight one [-]
+    source : str
+        Where the curve comes from.
+    """
+
+    name: str
+    title: str
+    shut_off: float
+    open_flow: float
+    exponent: float
+    source: str
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class FilterClass:
+    """One class of filters.
+
+    Parameters
+    ----------
+    name, title : str
+        Name in a profile, and name for people.
+    penetration : float or None
+        Largest share let through in the test of the class, all particles together [-]
+    fine, middle, coarse : float or None
+        Largest share let through of particles of 0.3-1, 1-3 and 3-10 um [-]
+    dust_class : bool
+        Whether the class is one for extractors of harmful dust.
+    lowest_limit : float or None
+        Exposure limit above which such a class may be used [mg/m^3]
+    clean_resistance : float
+        Pressure over velocity in the clean cloth, about [Pa*s/m]
+    source : str
+        The standard, and what is common practice.
+    """
+
+    name: str
+    title: str
+    penetration: float | None
+    fine: float | None
+    middle: float | None
+    coarse: float | None
+    dust_class: bool
+    lowest_limit: float | None
+    clean_resistance: float
     source: str

@@ -1,20 +1,29 @@
-"""Whether the piece stands on the bed by itself."""
+"""Whether the piece stands on the bed by itself, and how well its foot holds it there."""
 
 from __future__ import annotations
 
 from dataclasses import dataclass
-from math import pi
+from math import atan2, cos, degrees, inf, pi, radians
 from typing import TYPE_CHECKING
 
 import numpy as np
 
+from gyrecut.checks.opposed import CHORD_MM
+from gyrecut.checks.surface import patches_of
 from gyrecut.findings import Finding, Severity
 
 if TYPE_CHECKING:
+    from numpy.typing import NDArray
+
+    from gyrecut.checks.limits import PrintLimits
     from gyrecut.checks.surface import Surface
 
 LEAST_CONTACT_MM2 = 1.0  # about one bead by two: less does not hold the first layer; practice
 STRAIGHT = 1e-9  # rad; a gap of half a turn to this much is a straight edge of the foot
+LEAST_MARGIN = radians(5.0)  # a nozzle that catches tips less: common practice, no source
+MOST_SLENDER = 10.0  # height by foot; from there on a brim is advised: common practice, no source
+FACING = cos(radians(30.0))  # the two edges of a strip; more than this from parallel is a corner
+PLACES = 400  # looked at on the whole foot
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -25,15 +34,30 @@ class Stance:
     ----------
     contact_mm2 : float
         Area that lies on the bed [mm2].
+    footprint_share : float
+        That area by the hull of the piece seen from above [-].
+    strip_mm : float
+        Narrowest strip of the foot; inf when it has no two edges that run side by side [mm].
+    strip_place_mm : tuple of 3 float
+        Where that is [mm].
     centre_mm : tuple of 3 float
         Centre of mass [mm].
     is_steady : bool
         Whether the centre of mass is above the hull of the contact.
+    margin : float
+        Lean at which it tips over the nearest edge of that hull; 0 when it does so by itself [rad].
+    slenderness : float
+        Height by the least width of that hull; inf without one [-].
     """
 
     contact_mm2: float
+    footprint_share: float
+    strip_mm: float
+    strip_place_mm: tuple[float, float, float]
     centre_mm: tuple[float, float, float]
     is_steady: bool
+    margin: float
+    slenderness: float
 
 
 def measure_stance(surface: Surface) -> Stance:
@@ -46,6 +70,7 @@ def measure_stance(surface: Surface) -> Stance:
     """
     flat = surface.is_on_bed
     centre = surface.centre_of_mass
+    x, y, z = centre.tolist()
     contact = float(surface.areas[flat].sum())
     feet = surface.vertices[np.unique(surface.faces[flat])][:, :2] - centre[:2]
     is_steady = False
@@ -53,12 +78,128 @@ def measure_stance(surface: Surface) -> Stance:
         bearings = np.sort(np.arctan2(feet[:, 1], feet[:, 0]))
         gaps = np.diff(bearings, append=bearings[0] + 2 * pi)
         is_steady = bool(gaps.max() < pi - STRAIGHT)
-    x, y, z = centre.tolist()
-    return Stance(contact_mm2=contact, centre_mm=(x, y, z), is_steady=is_steady)
+    strip, place = _narrowest_strip(surface, np.flatnonzero(flat))
+    margin, slenderness = 0.0, inf
+    footprint = _hull(surface.vertices[:, :2])
+    if contact >= LEAST_CONTACT_MM2:
+        hull = _hull(feet)
+        slenderness = float(np.ptp(surface.vertices[:, 2])) / _least_width(hull)
+        if is_steady:
+            margin = atan2(_way_to_edge(hull), z)
+    return Stance(
+        contact_mm2=contact,
+        footprint_share=contact / _area(footprint),
+        strip_mm=strip,
+        strip_place_mm=place,
+        centre_mm=(x, y, z),
+        is_steady=is_steady,
+        margin=margin,
+        slenderness=slenderness,
+    )
 
 
-def stance_findings(stance: Stance, piece: str) -> tuple[Finding, ...]:
-    """Say when a piece has no foot, or falls over on the one it has."""
+def _hull(points: NDArray[np.float64]) -> NDArray[np.float64]:
+    """Give the corners of the convex hull, counter-clockwise, `(n, 2) float` [mm]."""
+    from scipy.spatial import ConvexHull  # noqa: PLC0415 - see `patches_of`
+
+    corners: NDArray[np.float64] = points[ConvexHull(points).vertices]
+    return corners
+
+
+def _area(outline: NDArray[np.float64]) -> float:
+    x, y = outline.T
+    return float(x @ np.roll(y, -1) - y @ np.roll(x, -1)) / 2
+
+
+def _sides(outline: NDArray[np.float64]) -> NDArray[np.float64]:
+    """Give the outward unit normal of each side, `(n, 2) float`."""
+    along = np.roll(outline, -1, axis=0) - outline
+    along /= np.linalg.norm(along, axis=1)[:, None]
+    return np.column_stack([along[:, 1], -along[:, 0]])
+
+
+def _way_to_edge(outline: NDArray[np.float64]) -> float:
+    """Give the way from the origin, inside, to the nearest side [mm]."""
+    return float(np.einsum("ij,ij->i", _sides(outline), outline).min())
+
+
+def _least_width(outline: NDArray[np.float64]) -> float:
+    """Give the width between two parallel lines; the least has one of them along a side [mm]."""
+    ways = _sides(outline) @ outline.T
+    return float((ways.max(axis=1) - ways.min(axis=1)).min())
+
+
+def _narrowest_strip(
+    surface: Surface, triangles: NDArray[np.int64]
+) -> tuple[float, tuple[float, float, float]]:
+    """Measure the foot square to its nearest edge, from places spread over it.
+
+    Notes
+    -----
+    Two edges make a strip where they run side by side and face away from one another; at the
+    corners of a foot the line ends on another edge, and tells nothing.
+    """
+    nowhere = (0.0, 0.0, 0.0)
+    if len(triangles) == 0:
+        return inf, nowhere
+    is_foot = np.zeros(len(surface.faces), dtype=np.bool_)
+    is_foot[triangles] = True
+    _, patch = patches_of(surface.neighbours, is_foot)
+    row, side = np.nonzero(~is_foot[surface.neighbours[triangles]])
+    faces = surface.faces[triangles[row]]
+    rows = np.arange(len(row))
+    # Seen from above a triangle of the foot runs clockwise: its inside is on the right.
+    start = surface.vertices[faces[rows, side], :2]
+    edge = surface.vertices[faces[rows, (side + 1) % 3], :2] - start
+    length = np.linalg.norm(edge, axis=1)
+    inward = np.column_stack([edge[:, 1], -edge[:, 0]]) / length[:, None]
+    of_edge = patch[triangles[row]]
+
+    places, of_place = _spread(surface, triangles)
+    offset = start[None] - places[:, None]
+    share = np.clip(-np.einsum("pej,ej->pe", offset, edge) / length**2, 0, 1)
+    ways = offset + share[..., None] * edge
+    gap = np.linalg.norm(ways, axis=2)
+    gap[patch[of_place][:, None] != of_edge] = inf
+    nearest = gap.argmin(axis=1)
+    all_places = np.arange(len(places))
+    across = inward[nearest]
+    back = -np.einsum("pj,pj->p", offset[all_places, nearest], across)
+
+    # From the place along `across` to each edge that the line meets.
+    square = np.column_stack([-across[:, 1], across[:, 0]])
+    one = np.einsum("pj,pej->pe", square, offset)
+    two = np.einsum("pj,pej->pe", square, offset + edge)
+    meets = (one > 0) != (two > 0)
+    part = np.divide(one, one - two, out=np.zeros_like(one), where=meets)
+    ahead = np.einsum("pj,pej->pe", across, offset + part[..., None] * edge)
+    ahead = np.where(meets & (ahead > 0), ahead, inf)
+    first = ahead.argmin(axis=1)
+    faces_back = np.einsum("pj,pj->p", inward[first], across) < -FACING
+    width = np.where(faces_back & (back > 0), back + ahead[all_places, first], inf)
+    least = int(width.argmin())
+    x, y = places[least].tolist()
+    return float(width[least]), (x, y, 0.0)
+
+
+def _spread(
+    surface: Surface, triangles: NDArray[np.int64]
+) -> tuple[NDArray[np.float64], NDArray[np.int64]]:
+    """Choose places on the foot by its area, `(p, 2)`, and the triangle of each, `(p,)`."""
+    ends = np.cumsum(surface.areas[triangles])
+    marks = (np.arange(PLACES) + 0.5) / PLACES * ends[-1]
+    chosen = triangles[np.minimum(np.searchsorted(ends, marks), len(triangles) - 1)]
+    u, v = np.modf(np.arange(1, PLACES + 1)[:, None] * (0.7548776662466927, 0.5698402909980532))[
+        0
+    ].T
+    beyond = u + v > 1
+    u[beyond], v[beyond] = 1 - u[beyond], 1 - v[beyond]
+    first, second, third = surface.corners[chosen][:, :, :2].transpose(1, 0, 2)
+    return first + u[:, None] * (second - first) + v[:, None] * (third - first), chosen
+
+
+def stance_findings(stance: Stance, piece: str, limits: PrintLimits) -> tuple[Finding, ...]:
+    """Say when a piece has no foot, falls over on the one it has, or may come off it."""
     x, y, z = stance.centre_mm
     if stance.contact_mm2 < LEAST_CONTACT_MM2:
         return (
@@ -83,6 +224,59 @@ def stance_findings(stance: Stance, piece: str) -> tuple[Finding, ...]:
                 what="the centre of mass is not above the foot",
                 where=f"centre of mass at ({x:.1f}, {y:.1f}, {z:.1f}) mm",
                 fix="choose another pose, or a wider foot",
+            ),
+        )
+    return (*_strip_findings(stance, piece, limits), *_tipping_findings(stance, piece))
+
+
+def _strip_findings(stance: Stance, piece: str, limits: PrintLimits) -> tuple[Finding, ...]:
+    if stance.strip_mm >= limits.least_strip_mm - CHORD_MM:
+        return ()
+    x, y, _ = stance.strip_place_mm
+    return (
+        Finding(
+            code="narrow-foot",
+            severity=Severity.WARN,
+            part=piece,
+            what=f"a strip of the foot is {stance.strip_mm:.2f} mm wide; below "
+            f"{limits.least_strip_mm:.2f} mm it may not hold on the bed",
+            measured=stance.strip_mm,
+            limit=limits.least_strip_mm,
+            unit="mm",
+            where=f"({x:.1f}, {y:.1f}, 0.0) mm in print pose",
+            fix="print it with a brim, or make the chamfer of its foot less",
+        ),
+    )
+
+
+def _tipping_findings(stance: Stance, piece: str) -> tuple[Finding, ...]:
+    fix = "print it with a brim, or lay it down"
+    if stance.margin < LEAST_MARGIN:
+        x, y, z = stance.centre_mm
+        return (
+            Finding(
+                code="tips-easily",
+                severity=Severity.WARN,
+                part=piece,
+                what=f"the piece tips over when it leans by {degrees(stance.margin):.1f} degrees",
+                measured=degrees(stance.margin),
+                limit=degrees(LEAST_MARGIN),
+                unit="deg",
+                where=f"centre of mass at ({x:.1f}, {y:.1f}, {z:.1f}) mm",
+                fix=fix,
+            ),
+        )
+    if stance.slenderness > MOST_SLENDER:
+        return (
+            Finding(
+                code="slender",
+                severity=Severity.WARN,
+                part=piece,
+                what=f"the piece is {stance.slenderness:.1f} times as high as its foot is wide",
+                measured=stance.slenderness,
+                limit=MOST_SLENDER,
+                where="whole piece",
+                fix=fix,
             ),
         )
     return ()

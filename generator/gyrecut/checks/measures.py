@@ -8,7 +8,12 @@ from typing import TYPE_CHECKING
 from gyrecut.checks.closed import Closedness, closedness_findings, measure_closedness
 from gyrecut.checks.contact import Stance, measure_stance, stance_findings
 from gyrecut.checks.fit import fit_findings
+from gyrecut.checks.captive import Cup, cup_findings, measure_cups
+from gyrecut.checks.features import Features, feature_findings, measure_features
+from gyrecut.checks.opposed import opposed
 from gyrecut.checks.overhang import Overhang, measure_overhang, overhang_findings
+from gyrecut.checks.rays import RayCaster
+from gyrecut.checks.sampling import spread_samples
 from gyrecut.checks.surface import surface_of
 from gyrecut.checks.thickness import Thickness, measure_thickness, thickness_findings
 
@@ -51,10 +56,14 @@ class SolidMeasures:
         Triangles of the mesh.
     thickness : Thickness
         Smallest wall and its place.
+    features : Features
+        Gaps, holes, pins and details that are too small.
     overhang : Overhang
         Overhang area and bridges.
     stance : Stance
         Bed contact and centre of mass.
+    cups : tuple of Cup
+        Hollows that hold resin, the largest first; not looked for on a filament printer.
     """
 
     size_mm: tuple[float, float, float]
@@ -62,8 +71,10 @@ class SolidMeasures:
     area_mm2: float
     triangles: int
     thickness: Thickness
+    features: Features
     overhang: Overhang
     stance: Stance
+    cups: tuple[Cup, ...]
 
 
 def measure_mesh(mesh: trimesh.Trimesh, limits: PrintLimits) -> PieceMeasures:
@@ -85,6 +96,11 @@ def measure_mesh(mesh: trimesh.Trimesh, limits: PrintLimits) -> PieceMeasures:
     closedness = measure_closedness(surface)
     if not closedness.is_one_body:
         return PieceMeasures(closedness=closedness, solid=None)
+    caster, samples = RayCaster(surface), spread_samples(surface)
+    outward = surface.normals[samples.triangle]
+    walls = opposed(samples, caster, -outward)
+    gaps = opposed(samples, caster.in_the_air(), outward)
+    area = float(surface.areas.sum())
     width, depth, height = (
         surface.corners.max(axis=(0, 1)) - surface.corners.min(axis=(0, 1))
     ).tolist()
@@ -93,11 +109,13 @@ def measure_mesh(mesh: trimesh.Trimesh, limits: PrintLimits) -> PieceMeasures:
         solid=SolidMeasures(
             size_mm=(width, depth, height),
             volume_mm3=closedness.volume_mm3,
-            area_mm2=float(surface.areas.sum()),
+            area_mm2=area,
             triangles=len(surface.faces),
-            thickness=measure_thickness(surface, limits.smallest_wall_mm),
+            thickness=measure_thickness(caster, walls, limits.smallest_wall_mm, area),
+            features=measure_features(caster, walls, gaps, limits),
             overhang=measure_overhang(surface, limits.overhang_limit, limits.bridge_limit_mm),
             stance=measure_stance(surface),
+            cups=measure_cups(surface, caster) if limits.process == "resin" else (),
         ),
     )
 
@@ -111,9 +129,11 @@ def findings_of(measures: PieceMeasures, piece: str, limits: PrintLimits) -> tup
     return (
         *findings,
         *fit_findings(solid.size_mm, piece, limits),
-        *stance_findings(solid.stance, piece),
+        *stance_findings(solid.stance, piece, limits),
         *thickness_findings(solid.thickness, piece, limits),
+        *feature_findings(solid.features, piece, limits),
         *overhang_findings(solid.overhang, piece, limits),
+        *cup_findings(solid.cups, piece),
     )
 
 

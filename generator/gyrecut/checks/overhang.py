@@ -9,12 +9,14 @@ or when it lies on a ledge too narrow to sag.
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, field
+from enum import IntEnum
 from math import cos, degrees, pi, radians
 from typing import TYPE_CHECKING
 
 import numpy as np
 
+from gyrecut.checks.lows import lows_of
 from gyrecut.checks.surface import BED_MM, patches_of
 from gyrecut.findings import Finding, Severity
 
@@ -22,7 +24,8 @@ if TYPE_CHECKING:
     from numpy.typing import NDArray
 
     from gyrecut.checks.limits import PrintLimits
-    from gyrecut.checks.surface import Surface
+    from gyrecut.checks.lows import lows_of
+from gyrecut.checks.surface import Surface
 
 SLACK = radians(0.5)  # a lean at the limit passes, whatever its last digit
 ROUNDING_MM = 0.01  # a span at the limit passes, whatever its last digit
@@ -34,7 +37,15 @@ LEAST_PATCH_MM2 = 0.1  # less than one bead squared: rounding, not a ceiling
 PLACES = 48  # looked at on each ceiling
 BEARINGS = 12  # strands through each place, beside the one to the nearest edge
 HELD_SLOPE = 0.1  # sine of the way down that counts as a wall
-LEVEL_MM = 1e-6  # vertices this close in height are level
+
+
+class FacetClass(IntEnum):
+    """How a triangle prints."""
+
+    FINE = 0
+    BED = 1
+    BRIDGE = 2
+    HANGING = 3
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -74,6 +85,9 @@ class Overhang:
         Area on ledges that are narrow enough to be let pass [mm2].
     starts_mm : tuple of (float, float, float)
         Lowest places of parts that begin in the air [mm].
+    classes : (n,) int8
+        `FacetClass` of each triangle. In a ceiling that is carried in part, each has the class of
+        the nearest sampled place.
     """
 
     area_mm2: float
@@ -82,6 +96,7 @@ class Overhang:
     bridges: tuple[Bridge, ...]
     ledge_mm2: float
     starts_mm: tuple[tuple[float, float, float], ...]
+    classes: NDArray[np.int8] = field(repr=False, compare=False)
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -140,6 +155,7 @@ def measure_overhang(surface: Surface, overhang_limit: float, bridge_limit_mm: f
     area, ledges, worst, largest = 0.0, 0.0, 0.0, 0.0
     place = (0.0, 0.0, 0.0)
     bridges: list[Bridge] = []
+    classes = np.where(in_the_air, FacetClass.FINE, FacetClass.BED).astype(np.int8)
     for triangles in _ceilings(surface, hangs):
         ceiling = _ceiling_of(surface, triangles)
         sizes = surface.areas[triangles]
@@ -151,7 +167,9 @@ def measure_overhang(surface: Surface, overhang_limit: float, bridge_limit_mm: f
         if 0 < len(rest) < PLACES:
             is_ledge[rest] = _overshoots(ceiling, rest, strands, longest_span)
         ledges += size * float(is_ledge.mean())
-        lacking = size * float((~is_bridged & ~is_ledge).mean())
+        is_lacking = ~is_bridged & ~is_ledge
+        classes[triangles] = _classes(surface, ceiling, is_bridged, is_lacking)
+        lacking = size * float(is_lacking.mean())
         x, y, z = (sizes @ surface.corners[triangles].mean(axis=1) / size).tolist()
         if lacking > 0:
             area += lacking
@@ -172,8 +190,27 @@ def measure_overhang(surface: Surface, overhang_limit: float, bridge_limit_mm: f
         place_mm=place,
         bridges=tuple(bridges),
         ledge_mm2=ledges,
-        starts_mm=_starts_in_the_air(surface),
+        starts_mm=tuple((x, y, z) for x, y, z in lows_of(surface).starts.tolist()),
+        classes=classes,
     )
+
+
+def _classes(
+    surface: Surface,
+    ceiling: _Ceiling,
+    is_bridged: NDArray[np.bool_],
+    is_lacking: NDArray[np.bool_],
+) -> NDArray[np.int8]:
+    """Class the triangles of one ceiling by its places; a narrow ledge is fine."""
+    of_place = np.where(is_bridged, FacetClass.BRIDGE, FacetClass.FINE)
+    of_place = np.where(is_lacking, FacetClass.HANGING, of_place).astype(np.int8)
+    if (of_place == of_place[0]).all():
+        return np.full(len(ceiling.triangles), of_place[0])
+    middles = surface.corners[ceiling.triangles, :, :2].mean(axis=1)
+    ways = middles[:, None] - ceiling.places
+    nearest = np.einsum("tpj,tpj->tp", ways, ways).argmin(axis=1)
+    classes: NDArray[np.int8] = of_place[nearest]
+    return classes
 
 
 def _leans(surface: Surface, overhang_limit: float) -> NDArray[np.float64]:
@@ -316,43 +353,6 @@ def _nearest(
     # Of several writes to one line the last one stays, which is the nearest.
     distance[line[forward]], held[line[forward]] = way[forward], is_held[forward]
     return distance.reshape(places, BEARINGS), held.reshape(places, BEARINGS)
-
-
-def _starts_in_the_air(surface: Surface) -> tuple[tuple[float, float, float], ...]:
-    """Find the lowest places of what begins in the air, steep as its sides may be.
-
-    Notes
-    -----
-    Level vertices that share an edge are taken as one. Where none of them has a lower neighbour
-    the surface has a hollow: a part begins there when the facets round it look down, and it is
-    the floor of a pocket when they look up.
-    """
-    from scipy.sparse import coo_array  # noqa: PLC0415 - see `patches_of`
-    from scipy.sparse.csgraph import connected_components  # noqa: PLC0415
-
-    start, end = surface.faces.ravel(), np.roll(surface.faces, -1, axis=1).ravel()
-    height = surface.vertices[:, 2]
-    rise = height[end] - height[start]
-    level = np.abs(rise) <= LEVEL_MM
-    graph = coo_array(
-        (np.ones(int(level.sum()), dtype=np.bool_), (start[level], end[level])),
-        shape=(len(height), len(height)),
-    )
-    count, labels = connected_components(graph.tocsr(), directed=False)
-    is_lowest = np.zeros(count, dtype=np.bool_)
-    is_lowest[labels[surface.faces.ravel()]] = True  # a vertex of no triangle is no part
-    is_lowest[labels[end[rise > LEVEL_MM]]] = False
-    is_lowest[labels[start[rise < -LEVEL_MM]]] = False
-    is_lowest[labels[height < BED_MM]] = False
-    if not is_lowest.any():
-        return ()
-    touches = is_lowest[labels[surface.faces]].any(axis=1)
-    facing = np.repeat((surface.normals[:, 2] * surface.areas)[touches], 3)
-    met = labels[surface.faces[touches].ravel()]
-    looks_up = np.bincount(met, weights=facing, minlength=count)
-    begins = np.flatnonzero(is_lowest & (looks_up < 0))
-    first = np.array([np.flatnonzero(labels == one)[0] for one in begins], dtype=np.int64)
-    return tuple((x, y, z) for x, y, z in surface.vertices[first].tolist())
 
 
 def overhang_findings(overhang: Overhang, piece: str, limits: PrintLimits) -> tuple[Finding, ...]:

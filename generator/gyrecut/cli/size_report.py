@@ -15,11 +15,14 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
     from typing import TextIO
 
+    from rich.console import Console
+
     from gyrecut.kit.contents import Fact
     from gyrecut.pipeline import Design, StageDesign
     from gyrecut.proportions.dimensions import Dimensions
-
-FIRST_ESTIMATE = "first estimate (Lapple cut size, Shepherd-Lapple pressure drop)"
+    from gyrecut.separation.forecast import Forecast
+    from gyrecut.separation.models import Agreement
+    from gyrecut.separation.operating_point import OperatingPoint
 
 
 def show_design(design: Design, stream: TextIO) -> None:
@@ -29,6 +32,31 @@ def show_design(design: Design, stream: TextIO) -> None:
     out = console(stream)
     for sentence in sentences(design):
         out.print(sentence)
+    out.print()
+    print_table(
+        out,
+        ("what", "#value", "unit", "note"),
+        map(_fact_cells, estimate_facts(design.forecast)),
+        title="What to expect",
+    )
+    for stage in design.stages:
+        of = f" of stage {stage.number}" if len(design.stages) > 1 else ""
+        _show_agreement(
+            out,
+            stage.forecast.cut_size,
+            title=f"Cut size{of}, every model",
+            unit="um",
+            factor=1e6,
+        )
+        _show_agreement(
+            out,
+            stage.forecast.pressure_drop,
+            title=f"Pressure drop{of}, every model",
+            unit="Pa",
+            factor=1.0,
+        )
+    _show_air(out, design.forecast)
+    _show_answers(out, design)
     for stage in design.stages:
         of = f" of stage {stage.number}" if len(design.stages) > 1 else ""
         out.print()
@@ -38,35 +66,37 @@ def show_design(design: Design, stream: TextIO) -> None:
             _dimension_cells(stage.dimensions),
             title=f"Dimensions{of}; diameters are inside unless it says outside",
         )
-        out.print()
-        print_table(
-            out,
-            ("what", "#value", "unit", "after"),
-            map(_estimate_cells, estimate_facts(stage.prediction, "")),
-            title=f"First prediction{of}: {FIRST_ESTIMATE}",
-        )
     out.print()
     print_findings(out, design.findings, title="Rules")
-    out.print(f"\n{design.stages[0].prediction.note}")
+    out.print(f"\n{design.forecast.advice}")
     titles = "; ".join(caution.title for caution in cautions_for(design))
     out.print(f"\nCautions, in full in README.md and in every kit: {titles}.")
 
 
 def sentences(design: Design) -> Iterator[str]:
     """Say in plain words how large it is, what it catches and what it costs."""
-    profile, stages = design.profile, design.stages
-    sizes = ", then ".join(map(_size, stages))
-    yield f"{profile.name}: {sizes}."
-    cuts = ", then ".join(f"{micrometres(stage.prediction.cut_size_lapple)} um" for stage in stages)
-    kept = percent(stages[0].prediction.mass_kept)
-    first = "the first stage" if len(stages) > 1 else "it"
-    yield (
-        f"First estimate of the catch: half of the grains of {cuts}, more of the larger ones; "
-        f"{first} keeps {kept} % of this dust by mass."
+    expected, catch = design.forecast, design.forecast.catch
+    sizes = ", then ".join(map(_size, design.stages))
+    yield f"{design.profile.name}: {sizes}."
+    cuts = ", then ".join(
+        f"{micrometres(stage.forecast.cut_size.central)} um" for stage in design.stages
     )
-    drop = sum(stage.prediction.pressure_drop_shepherd_lapple for stage in stages)
-    flow = cubic_metres_an_hour(profile.air.flow)
-    yield f"First estimate of the cost: {figure(drop)} Pa of suction at {flow} m3/h."
+    yield (
+        f"It should keep {percent(catch.kept)} % of this dust by mass (90 % range "
+        f"{percent(catch.spread.low)} to {percent(catch.spread.high)}), and half of the grains of "
+        f"{cuts}."
+    )
+    drops = [stage.forecast.pressure_drop for stage in design.stages]
+    low, central, high = (sum(getattr(drop, end) for drop in drops) for end in _ENDS)
+    flow = cubic_metres_an_hour(expected.flow)
+    gives = "has to give" if expected.flow_is_target else "gives"
+    yield (
+        f"It takes {figure(central)} Pa ({figure(low)} to {figure(high)}) of the "
+        f"{figure(expected.clean.suction)} Pa that the source {gives} at {flow} m3/h."
+    )
+
+
+_ENDS = ("low", "central", "high")
 
 
 def _size(stage: StageDesign) -> str:
@@ -78,6 +108,79 @@ def _size(stage: StageDesign) -> str:
     )
 
 
+def _show_agreement(out: Console, said: Agreement, *, title: str, unit: str, factor: float) -> None:
+    rows = [
+        (
+            "*" if word.trusted else "",
+            word.model,
+            "" if word.value is None else figure(word.value * factor),
+            ", ".join(figure(ratio) for ratio in word.measured),
+            word.why,
+        )
+        for word in said.words
+    ]
+    central, low, high = (figure(getattr(said, end) * factor) for end in ("central", "low", "high"))
+    out.print()
+    print_table(
+        out,
+        ("", "model", f"#{unit}", "over measured", "* carries the central value"),
+        rows,
+        title=title,
+    )
+    out.print(f"Central {central} {unit}, band {low} to {high}: {said.basis}.")
+
+
+def _show_air(out: Console, expected: Forecast) -> None:
+    points = [("as built", expected.clean), ("pick-up covered", expected.choked)]
+    if expected.loaded is not None:
+        points.append(("filter at its limit", expected.loaded))
+    out.print()
+    print_table(
+        out,
+        ("state", "#flow m3/h", "#suction Pa", "#at the tool Pa", "#air power W", "#hose m/s"),
+        [(state, *_point_cells(point)) for state, point in points],
+        title="Where suction and air path meet",
+    )
+    total = sum(float(share.pressure_drop) for share in expected.clean.shares)
+    out.print()
+    print_table(
+        out,
+        ("part", "#Pa", "#%"),
+        [
+            (
+                share.name,
+                figure(float(share.pressure_drop)),
+                figure(100 * float(share.pressure_drop) / total, 2),
+            )
+            for share in expected.clean.shares
+        ],
+        title="Where the pressure goes, as built",
+    )
+
+
+def _point_cells(point: OperatingPoint) -> tuple[str, ...]:
+    return (
+        cubic_metres_an_hour(point.flow),
+        figure(point.suction),
+        figure(point.tool_suction),
+        figure(point.air_power),
+        figure(point.hose_velocity),
+    )
+
+
+def _show_answers(out: Console, design: Design) -> None:
+    answers = design.answers
+    if not answers:
+        return
+    out.print()
+    print_table(
+        out,
+        ("question", "answer"),
+        [(answer.question, answer.answer) for answer in answers],
+        title="Asked backwards",
+    )
+
+
 def _dimension_cells(dimensions: Dimensions) -> Iterator[tuple[str, str, str]]:
     named = ""
     for part, what, millimetres in dimension_rows(dimensions):
@@ -85,6 +188,6 @@ def _dimension_cells(dimensions: Dimensions) -> Iterator[tuple[str, str, str]]:
         named = part
 
 
-def _estimate_cells(fact: Fact) -> tuple[str, str, str, str]:
+def _fact_cells(fact: Fact) -> tuple[str, str, str, str]:
     number = percent(fact.value / 100) if fact.unit == "%" else figure(fact.value)
     return fact.label, number, fact.unit, fact.note

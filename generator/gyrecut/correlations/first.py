@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from gyrecut.correlations.heads import slot_over_finder
-from gyrecut.correlations.leith_licht import CONE_OVER_BODY
+from gyrecut.correlations.vortex import CONE_OVER_BODY
 
 if TYPE_CHECKING:
     from gyrecut.airflow.ranges import Numbers

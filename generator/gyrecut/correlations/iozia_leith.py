@@ -119,7 +119,7 @@ def iozia_leith(
 
 
 def slope_iozia_leith(geometry: CycloneGeometry, *, cut_size: Numbers) -> Numbers:
-    r"""Slope of the grade curve, for :func:`~gyrecut.correlations.grade.grade_efficiency_with_slope`.
+    r"""Slope of the grade curve of :mod:`gyrecut.correlations.grade`.
 
     .. math::
         \ln \beta = 0.62 - 0.87 \ln(d_{50}/\mathrm{cm}) + 5.21 \ln \frac{ab}{D^2}

@@ -18,6 +18,7 @@ from gyrecut.correlations.validity import (
     TEMPERATURE,
     VISCOSITY,
 )
+from gyrecut.correlations.vortex import CONE_OVER_BODY
 
 if TYPE_CHECKING:
     from gyrecut.airflow.ranges import Numbers
@@ -38,13 +39,6 @@ FINDER_BELOW_SLOT = Range(
     high=100.0,
     unit="-",
     source="the entry volume begins at half the slot height",
-)
-CONE_OVER_BODY = Range(
-    quantity="cone height over body diameter",
-    low=0.05,
-    high=20.0,
-    unit="-",
-    source="room around the published shapes; common practice, no source",
 )
 VORTEX_EXPONENT = Range(
     quantity="vortex exponent", low=0.0, high=1.0, unit="-", source="rigid body to free vortex"

@@ -90,7 +90,7 @@ def penetration_factor(*, dust_content: Numbers, reference_content: Numbers) -> 
 
     References
     ----------
-    .. [1] Baxter, as quoted in US EPA APTI course 413, from memory.
+    .. [1] Baxter, as quoted in course material of the US EPA, from memory.
     """
     SOME_DUST.check(dust_content)
     SOME_DUST.check(reference_content)

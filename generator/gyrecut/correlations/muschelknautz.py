@@ -206,7 +206,7 @@ def dust_friction_muschelknautz(
 def acceleration_loss_muschelknautz(
     *, inlet_velocity: Numbers, duct_velocity: Numbers, air_density: Numbers, loading: Numbers
 ) -> Numbers:
-    r"""Static pressure spent on bringing air and dust from the duct's velocity to the slot's.
+    r"""Pressure that it takes to bring air and dust from the duct's velocity to the slot's.
 
     .. math:: \Delta p = (1 + c_0) \rho (v_2^2 - v_1^2) / 2
 
@@ -299,6 +299,9 @@ def muschelknautz(
 
     Notes
     -----
+    Constriction, core velocity and cut size have the same form in VDI-Waermeatlas, 12th ed.,
+    Springer 2019, ch. L3.4, as read in a published implementation of it.
+
     For a hydraulically smooth wall; the term for a rough one is left out, because the form
     remembered gives friction factors that cannot be right. The drop is of total pressure with
     all swirl lost: up to twice above the measured static drop of narrow finders. Where the inlet

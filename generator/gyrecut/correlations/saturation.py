@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from gyrecut.airflow.ranges import Range
-from gyrecut.correlations.dust_sizes import MEDIAN
+from gyrecut.correlations.size_distributions import MEDIAN
 from gyrecut.correlations.validity import CUT_SIZE
 
 if TYPE_CHECKING:
@@ -55,7 +55,7 @@ def saturation_loading_muschelknautz(
 
     References
     ----------
-    .. [1] Hoffmann and Stein, Gas Cyclones and Swirl Tubes, 2nd ed., Springer 2008, ch. 9, from
+    .. [1] Hoffmann and Stein, Gas Cyclones and Swirl Tubes, 2nd ed., Springer 2008, ch. 6, from
        memory; older editions have an exponent of 0.4 below 0.1.
     """
     CUT_SIZE.check(cut_size)

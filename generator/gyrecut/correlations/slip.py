@@ -36,12 +36,19 @@ DIAMETER = Range(
     unit="m",
     source="far beyond any workshop dust; common practice, no source",
 )
+STOKES_DIAMETER = Range(
+    quantity="cut size without slip",
+    low=1e-7,
+    high=0.1,
+    unit="m",
+    source="finer than any cyclone cuts; common practice, no source",
+)
 PATH = Range(
     quantity="mean free path",
     low=1e-9,
-    high=1e-5,
+    high=1e-6,
     unit="m",
-    source="air at 0.01 to 50 bar; common practice, no source",
+    source="air at about 0.07 to 60 bar; common practice, no source",
 )
 SHAPE_FACTOR = Range(
     quantity="dynamic shape factor",
@@ -111,7 +118,7 @@ def slip_factor_allen_raabe(diameter: Numbers, *, mean_free_path: Numbers) -> Nu
     Raises
     ------
     OutOfRangeError
-        Outside 1 nm to 0.1 m, or 1 nm to 10 um.
+        Outside 1 nm to 0.1 m, or 1 nm to 1 um.
 
     References
     ----------
@@ -143,22 +150,16 @@ def physical_cut_size(stokes_diameter: Numbers, *, mean_free_path: Numbers) -> N
     Raises
     ------
     OutOfRangeError
-        Outside 1 nm to 0.1 m, or 1 nm to 10 um.
+        Outside 100 nm to 0.1 m, or 1 nm to 1 um.
 
     References
     ----------
     .. [1] Hinds, Aerosol Technology, 2nd ed., Wiley 1999, ch. 3, from memory; solved by repeated
        substitution for all elements of an array at once.
     """
-    DIAMETER.check(stokes_diameter)
+    STOKES_DIAMETER.check(stokes_diameter)
     PATH.check(mean_free_path)
-    diameter: Numbers = stokes_diameter / np.sqrt(_slip_factor(stokes_diameter, mean_free_path))
-    for _ in range(STEPS):
-        before = diameter
-        diameter = stokes_diameter / np.sqrt(_slip_factor(diameter, mean_free_path))
-        if np.all(np.abs(diameter - before) <= CLOSE_ENOUGH * diameter):
-            break
-    return diameter
+    return _with_slip(stokes_diameter, mean_free_path)
 
 
 def aerodynamic_diameter(
@@ -200,10 +201,18 @@ def aerodynamic_diameter(
     PARTICLE_DENSITY.check(particle_density)
     SHAPE_FACTOR.check(shape_factor)
     slip = slip_factor_allen_raabe(diameter, mean_free_path=mean_free_path)
-    return physical_cut_size(
-        diameter * np.sqrt(particle_density * slip / (UNIT_DENSITY * shape_factor)),
-        mean_free_path=mean_free_path,
-    )
+    without_slip = diameter * np.sqrt(particle_density * slip / (UNIT_DENSITY * shape_factor))
+    return _with_slip(without_slip, mean_free_path)
+
+
+def _with_slip(without_slip: Numbers, free_path: Numbers) -> Numbers:
+    diameter: Numbers = without_slip / np.sqrt(_slip_factor(without_slip, free_path))
+    for _ in range(STEPS):
+        before = diameter
+        diameter = without_slip / np.sqrt(_slip_factor(diameter, free_path))
+        if np.all(np.abs(diameter - before) <= CLOSE_ENOUGH * diameter):
+            break
+    return diameter
 
 
 def _slip_factor(diameter: Numbers, free_path: Numbers) -> Numbers:

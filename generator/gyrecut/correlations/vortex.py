@@ -23,6 +23,13 @@ if TYPE_CHECKING:
 
 _SOURCE = "room around the published shapes; common practice, no source"
 
+CONE_OVER_BODY = Range(
+    quantity="cone height over body diameter",
+    low=0.05,
+    high=20.0,
+    unit="-",
+    source=_SOURCE,
+)
 CORE_SHARE = Range(
     quantity="core diameter over body diameter", low=0.02, high=0.95, unit="-", source=_SOURCE
 )

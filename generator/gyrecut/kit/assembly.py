@@ -15,6 +15,8 @@ if TYPE_CHECKING:
     from gyrecut.proportions.dimensions import Dimensions
 
 SCREW_LENGTHS_MM = (6, 8, 10, 12, 16, 20, 25, 30, 35, 40, 45, 50)  # preferred, ISO 4762 lists
+GASKET_MM = 3.0  # closed-cell foam
+SQUEEZED_MM = 2.0  # the same drawn up by a third: seal makers' notes, common practice
 BIN_LID_MM = 4.0  # thickness of a pail lid or drum head with a washer: common practice, no source
 SPARE_MM = 1.0
 GLUE_GAP_SPARE = 1.5  # what squeezes out: common practice, no source
@@ -56,14 +58,14 @@ def hardware(d: Dimensions, fastener: Fastener, *, copies: int) -> Iterator[Hard
         quantity=str(in_portal),
         where="transition",
     )
-    through = d.bin_ring.thickness_mm + BIN_LID_MM + fastener.nut_height * 1000
+    through = d.bin_ring.thickness_mm + BIN_LID_MM + SQUEEZED_MM + fastener.nut_height * 1000
     yield Hardware(
         what=f"{ring.thread} x {_shortest_screw(through)} screw, nut and two washers",
         quantity=str(len(ring.places_mm) * copies),
         where="bin ring, through the bin's lid",
     )
     yield Hardware(
-        what="flat gasket, closed-cell foam 3 mm",
+        what=f"flat gasket, closed-cell foam {GASKET_MM:g} mm",
         quantity=f"{_gasket_cm2(d) * copies:.0f} cm2",
         where="under the lid, behind the transition, under the bin ring",
     )
@@ -82,7 +84,8 @@ def steps(d: Dimensions, *, copies: int) -> Iterator[str]:
     if any(ring.sectors > 1 for ring in division.rings):
         yield (
             "Glue the sectors of each body ring into a ring: half of the wall of one laps over "
-            "half of the wall of the next, the inner faces flush; strap it round until it is hard."
+            "half of the wall of the next. Slide each sector in along the axis, the inner faces "
+            "flush, and strap the ring round until it is hard."
         )
     if division.lid_sectors > 1:
         yield (
@@ -90,7 +93,7 @@ def steps(d: Dimensions, *, copies: int) -> Iterator[str]:
             "and weigh them down until they are hard."
         )
     yield (
-        f"Press a {screws.thread} heat-set insert into each of the {len(screws.places_mm)} holes "
+        f"Press an {screws.thread} heat-set insert into each of the {len(screws.places_mm)} holes "
         f"in the rim and the {len(d.portal.screws.places_mm)} holes in the portal, flush with "
         "the face."
     )
@@ -132,9 +135,10 @@ def steps(d: Dimensions, *, copies: int) -> Iterator[str]:
 
 
 def _screw_into_insert(plate_mm: float, hole_mm: float) -> int:
-    """Longest standard screw that does not reach the bottom of the insert's hole."""
+    """Longest standard screw through plate and gasket that stays off the insert hole's bottom."""
+    deepest = plate_mm + SQUEEZED_MM + hole_mm - SPARE_MM
     return max(
-        (length for length in SCREW_LENGTHS_MM if length <= plate_mm + hole_mm - SPARE_MM),
+        (length for length in SCREW_LENGTHS_MM if length <= deepest),
         default=SCREW_LENGTHS_MM[0],
     )
 

@@ -10,7 +10,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from gyrecut.proportions.dimensions import Dimensions
-    from gyrecut.separation.prediction import FirstPrediction
+    from gyrecut.separation.forecast import Forecast
 
 
 def body_facts(d: Dimensions, of: str) -> Iterator[Fact]:
@@ -29,33 +29,59 @@ def body_facts(d: Dimensions, of: str) -> Iterator[Fact]:
     )
 
 
-def estimate_facts(prediction: FirstPrediction, of: str) -> Iterator[Fact]:
-    """Give the first estimate of one separator, each number with the formula it comes from."""
-
-    def note(of_what: str) -> str:
-        return ", ".join(part for part in (prediction.methods.get(of_what, ""), of) if part)
-
+def estimate_facts(expected: Forecast) -> Iterator[Fact]:
+    """Give the forecast in the numbers a person at the bench reads."""
+    catch, several = expected.catch, len(expected.stages) > 1
     yield Fact(
-        label="inlet velocity",
-        value=prediction.inlet_velocity,
-        unit="m/s",
-        note=note("inlet_velocity"),
-    )
-    yield Fact(
-        label="cut size",
-        value=prediction.cut_size_lapple * 1e6,
-        unit="um",
-        note=note("cut_size_lapple"),
-    )
-    yield Fact(
-        label="pressure drop",
-        value=prediction.pressure_drop_shepherd_lapple,
-        unit="Pa",
-        note=note("pressure_drop_shepherd_lapple"),
+        label="air flow",
+        value=expected.flow * 3600,
+        unit="m3/h",
+        note="the profile's target" if expected.flow_is_target else "where source and system meet",
     )
     yield Fact(
         label="share of the dust's mass kept",
-        value=prediction.mass_kept * 100,
+        value=catch.kept * 100,
         unit="%",
-        note=note("mass_kept"),
+        note=f"90 % range {catch.spread.low * 100:.4g} to {catch.spread.high * 100:.4g} %",
     )
+    for number, stage in enumerate(expected.stages, start=1):
+        of = f", stage {number}" if several else ""
+        cut, drop = stage.cut_size, stage.pressure_drop
+        yield Fact(label=f"inlet velocity{of}", value=stage.inlet_velocity, unit="m/s")
+        yield Fact(
+            label=f"cut size, half caught{of}",
+            value=cut.central * 1e6,
+            unit="um",
+            note=f"{cut.low * 1e6:.2g} to {cut.high * 1e6:.2g} um by the measured cyclones",
+        )
+        yield Fact(
+            label=f"pressure drop{of}",
+            value=drop.central,
+            unit="Pa",
+            note=f"{drop.low:.0f} to {drop.high:.0f} Pa",
+        )
+    yield Fact(label="suction the source has to give", value=expected.clean.suction, unit="Pa")
+    yield Fact(
+        label="suction to choose a source by",
+        value=expected.safe_suction,
+        unit="Pa",
+        note="separator after Shepherd and Lapple",
+    )
+    yield Fact(label="suction left at the tool", value=expected.clean.tool_suction, unit="Pa")
+    yield Fact(label="air velocity in the hose", value=expected.clean.hose_velocity, unit="m/s")
+    if catch.to_filter is not None:
+        yield Fact(
+            label="dust that reaches the filter",
+            value=catch.to_filter * 3.6e6,
+            unit="g/h",
+            note=f"median {catch.passing_median * 1e6:.2g} um",
+        )
+    if catch.bin_fill_time is not None:
+        yield Fact(label="working time to a full bin", value=catch.bin_fill_time / 3600, unit="h")
+    if expected.filter is not None and expected.filter.life is not None:
+        yield Fact(
+            label="working time to the filter's limit",
+            value=expected.filter.life / 3600,
+            unit="h",
+            note="weak: a factor of 3 either way",
+        )

@@ -76,12 +76,12 @@ def _facts(title: str, facts: Iterable[Fact]) -> str:
 
 
 def _estimate(facts: Sequence[Fact]) -> str:
-    table = _facts("First estimate", facts)
+    table = _facts("What to expect", facts)
     return (
         f"{table}\n\n"
-        "A first estimate only: the cut size after Lapple, the pressure drop after Shepherd and "
-        "Lapple, two short formulas that leave much of the real flow out. The cyclone you build "
-        "can catch more or less and cost more or less. Measure and weigh after building."
+        "An estimate: published models side by side, the central one where measured cyclones lie, "
+        "and a band no narrower than those measurements. `gyrecut size` shows every model. Weigh "
+        "and measure after building."
     )
 
 

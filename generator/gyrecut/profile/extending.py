@@ -23,7 +23,10 @@ EXTENDS = "extends"
 _REPLACED_WHEN_CHANGED: Mapping[tuple[str, ...], str] = {
     ("outlet",): "kind",
     ("printer",): "process",
+    ("dust", "distribution"): "kind",
 }
+# All keys of these groups tell what it is: points, or the two ends of a curve.
+_REPLACED = {("air", "source")}
 
 _CONTROL = re.compile("[\x00-\x08\x0b\x0c\x0e-\x1f\x7f\ufffe\uffff]")
 _TAB = re.compile(r"^ *\t", re.MULTILINE)
@@ -143,6 +146,8 @@ def _next(wish: Branch, chain: list[Path]) -> Path:
 def _merge(base: Branch, own: Branch, path: tuple[str, ...]) -> Branch:
     """Lay `own` over `base`: groups are merged, everything else is replaced."""
     if not isinstance(base.content, dict) or not isinstance(own.content, dict):
+        return own
+    if path in _REPLACED:
         return own
     telling = _REPLACED_WHEN_CHANGED.get(path)
     if telling in own.content and telling in base.content:

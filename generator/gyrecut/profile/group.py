@@ -63,9 +63,10 @@ class Group(BaseModel):
     @classmethod
     def _translated(cls, error: ErrorDetails) -> InitErrorDetails:
         if error["type"] == "missing":
-            words = missing(cls.model_fields[str(error["loc"][-1])], str(error["loc"][-1]))
+            key = str(error["loc"][-1])
+            words = missing(cls.fields_by_key()[key], key)
         elif error["type"] == "extra_forbidden":
-            near = closest(error["loc"][-1], cls.model_fields)
+            near = closest(error["loc"][-1], cls.fields_by_key())
             fix = or_else(near, "take the line out")
             words = mistake(
                 Code.UNKNOWN_KEY,
@@ -81,7 +82,12 @@ class Group(BaseModel):
 
     @classmethod
     def _keys(cls) -> str:
-        return "the keys " + ", ".join(cls.model_fields)
+        return "the keys " + ", ".join(cls.fields_by_key())
+
+    @classmethod
+    def fields_by_key(cls) -> dict[str, FieldInfo]:
+        """Give the fields by the keys of the profile, which may be words that Python keeps."""
+        return {field.alias or name: field for name, field in cls.model_fields.items()}
 
 
 def missing(field: FieldInfo, name: str) -> PydanticCustomError:

@@ -9,11 +9,10 @@ from functools import partial
 from typing import TYPE_CHECKING, Annotated, Any, ClassVar, Literal
 
 from pydantic import Field
-from pydantic_core import PydanticCustomError
 
-from gyrecut.catalogue import dusts, families, fasteners, hoses, polymers
+from gyrecut.catalogue import dusts, families, fasteners, polymers
+from gyrecut.profile.air import FIT, Air, Fit, HoseName
 from gyrecut.profile.bounds import (
-    ALTITUDE,
     BIN_WALL,
     BODY,
     BRIDGE,
@@ -22,14 +21,11 @@ from gyrecut.profile.bounds import (
     CLEARANCE,
     CUT,
     FEED,
-    FLOW,
     GRAIN,
     GRAIN_DENSITY,
     HEAP_DENSITY,
     HEIGHT,
     HOSE_BORE,
-    HOSE_LENGTH,
-    HUMIDITY,
     INTAKE,
     LAP,
     LAYER,
@@ -42,88 +38,31 @@ from gyrecut.profile.bounds import (
     OVERHANG,
     PIXEL,
     RATIO,
+    SHAPE_FACTOR,
     SPREAD,
-    TEMPERATURE,
     VELOCITY,
     VOLUME,
     WALL,
 )
 from gyrecut.profile.group import Group, Mistakes, missing_value
 from gyrecut.profile.problems import Code
-from gyrecut.profile.scalars import OneOf, PlainNumber, Slug, Text, WholeNumber, closest, mistake
+from gyrecut.profile.scalars import OneOf, PlainNumber, Slug, Text, WholeNumber, mistake
 from gyrecut.profile.shapes import ByKind, ListOf, NameOr
+from gyrecut.profile.sizes import LogNormalSizes, RosinRammlerSizes, SieveSizes
 
 if TYPE_CHECKING:
     from gyrecut.profile.quantities import Quantity
 
 
-def _nearest_hose(given: object) -> str | None:
-    """Give the size next to the one asked for: "39 mm" is not "93 mm" with a slip."""
-    bare = isinstance(given, int | float)
-    try:
-        size = HOSE_BORE.read(f"{given} mm" if bare else given)
-    except PydanticCustomError:
-        return closest(given, hoses())
-    return min(hoses().values(), key=lambda row: abs(row.nominal - size)).name
-
-
-HOSE = OneOf(
-    noun="hose",
-    names=hoses,
-    example="38 mm",
-    nearest=_nearest_hose,
-    otherwise="choose the nearest size, and give the hose's own as measured",
-)
-FIT = OneOf(noun="fit", names=lambda: ("over", "inside"), example="over")
 NAME = Slug(example="my-separator")
 
 
-Fit = Literal["over", "inside"]
-HoseName = Annotated[str, HOSE]
-
-
-class HoseRun(Group):
-    """The hose from the tool to the separator."""
-
-    line: ClassVar[str] = "hose: {nominal: 38 mm, fit: over, length: 3 m, wall: corrugated}"
-
-    nominal: HoseName = Field(description="Nominal hose size, from the catalogue")
-    fit: Annotated[Fit, FIT] = Field(
-        description="over: the hose goes over the printed cuff; inside: the hose goes into it"
-    )
-    measured: Annotated[float, HOSE_BORE] | None = Field(
-        default=None,
-        description="Hose as measured: its bore for fit over, its outside for fit inside",
-    )
-    length: Annotated[float, HOSE_LENGTH] = Field(description="Length of the hose")
-    wall: Annotated[
-        Literal["smooth", "corrugated"],
-        OneOf(noun="hose wall", names=lambda: ("smooth", "corrugated"), example="corrugated"),
-    ] = Field(description="Inside of the hose wall")
-    bends: Annotated[int, WholeNumber(low=0, high=50, example="2")] = Field(
-        default=0, description="Right-angle bends the hose lies in; none where left out"
-    )
-
-
-class Air(Group):
-    """The air that is moved, and the hose it comes through."""
-
-    line: ClassVar[str] = "air: {flow: 140 m3/h, hose: ...}"
-
-    flow: Annotated[float, FLOW] = Field(description="Air flow the separator is sized for")
-    temperature: Annotated[float, TEMPERATURE] = Field(
-        default_factory=partial(TEMPERATURE.si, "20 degC"),
-        description="Air temperature; 20 degC where left out",
-    )
-    altitude: Annotated[float, ALTITUDE] = Field(
-        default_factory=partial(ALTITUDE.si, "0 m"),
-        description="Height of the workshop above the sea; 0 m where left out",
-    )
-    relative_humidity: Annotated[float, HUMIDITY] = Field(
-        default_factory=partial(HUMIDITY.si, "50 %"),
-        description="Relative humidity of the air; 50 % where left out",
-    )
-    hose: HoseRun = Field(description="The hose from the tool to the separator")
+def _distributions() -> dict[str, type[Group]]:
+    return {
+        "log-normal": LogNormalSizes,
+        "rosin-rammler": RosinRammlerSizes,
+        "sieve": SieveSizes,
+    }
 
 
 class DustFeed(Group):
@@ -137,6 +76,8 @@ class DustFeed(Group):
         "spread": SPREAD,
         "largest_chip": CHIP,
     }
+    SIZES: ClassVar[tuple[str, ...]] = ("median", "spread")
+    """What a distribution stands for."""
 
     kind: Annotated[str, OneOf(noun="dust", names=dusts, example="hardwood-sanding")] | None = (
         Field(default=None, description="Kind of dust, from the catalogue; or give all own values")
@@ -153,8 +94,23 @@ class DustFeed(Group):
     spread: Annotated[float, SPREAD] | None = Field(
         default=None, description="Geometric standard deviation of the grain sizes by mass"
     )
+    distribution: (
+        Annotated[
+            LogNormalSizes | RosinRammlerSizes | SieveSizes,
+            ByKind(
+                kinds=_distributions,
+                example=LogNormalSizes.line.removeprefix("distribution: "),
+            ),
+        ]
+        | None
+    ) = Field(default=None, description="Grain sizes by mass, in place of median and spread")
     largest_chip: Annotated[float, CHIP] | None = Field(
         default=None, description="Longest piece to expect in the stream"
+    )
+    shape_factor: Annotated[float, SHAPE_FACTOR] | None = Field(
+        default=None,
+        description="Drag of a grain over that of a sphere of its volume, in place of the "
+        "catalogue's",
     )
     feed: Annotated[float, FEED] | None = Field(
         default=None, description="Dust that arrives in an hour of work"
@@ -162,10 +118,20 @@ class DustFeed(Group):
 
     @classmethod
     def rules(cls, given: Mapping[str, Any]) -> Mistakes:
-        """Ask for all own values where there is no kind."""
+        """Ask for all own values where there is no kind, and for the sizes once."""
+        sized = given.get("distribution") is not None
+        for key in cls.SIZES:
+            if sized and given.get(key) is not None:
+                what = "says the grain sizes a second time, beside distribution"
+                fix = f"keep {key} or distribution, and take the other out"
+                allowed = "distribution, or median and spread"
+                code = Code.NOT_TOGETHER
+                yield (key,), mistake(code, what, allowed=allowed, fix=fix, about_key=True)
         if given.get("kind") is not None:
             return
-        lacking = [key for key in cls.OWN if given.get(key) is None]
+        lacking = [
+            key for key in cls.OWN if given.get(key) is None and not (sized and key in cls.SIZES)
+        ]
         if lacking == list(cls.OWN):
             fix = 'add a line such as "kind: hardwood-sanding"'
             what = "has neither a kind nor own values"
@@ -174,7 +140,7 @@ class DustFeed(Group):
             what = f"has no kind, and lacks {', '.join(lacking)}"
         else:
             return
-        allowed = f"a kind, or all of {', '.join(cls.OWN)}"
+        allowed = f"a kind, or all of {', '.join(cls.OWN)}; distribution for median and spread"
         yield (), mistake(Code.DUST_INCOMPLETE, what, allowed=allowed, fix=fix)
 
 

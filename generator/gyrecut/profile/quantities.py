@@ -34,6 +34,13 @@ _FRACTION = re.compile(r"[0-9] *[/\u2044] *[0-9]|[\u00bc-\u00be]")
 UNITS: Mapping[str, Mapping[str, str]] = MappingProxyType(
     {
         "length": {"mm": "mm", "cm": "cm", "m": "m", "um": "um", "in": "inch", "ft": "foot"},
+        "area": {
+            "mm2": "mm**2",
+            "cm2": "cm**2",
+            "m2": "m**2",
+            "in2": "inch**2",
+            "ft2": "foot**2",
+        },
         "flow": {
             "m3/h": "m**3/hour",
             "m3/min": "m**3/min",
@@ -55,6 +62,7 @@ UNITS: Mapping[str, Mapping[str, str]] = MappingProxyType(
 SI: Mapping[str, str] = MappingProxyType(
     {
         "length": "m",
+        "area": "m**2",
         "flow": "m**3/s",
         "pressure": "Pa",
         "temperature": "K",
@@ -177,7 +185,8 @@ class Quantity(Scalar):
     def _wrong_unit(self, unit: str) -> PydanticCustomError:
         of = [dimension for dimension, units in UNITS.items() if unit in units]
         if of:
-            what = f"has a unit of {of[0]} where a {self.dimension} belongs"
+            article = "an" if self.dimension[0] in "aeiou" else "a"
+            what = f"has a unit of {of[0]} where {article} {self.dimension} belongs"
             fix = f"use one of the units {self.units}"
         else:
             what = f'has the unknown unit "{unit[:20]}"'

@@ -64,7 +64,10 @@ def at_its_line(path: Path, wrong: UnbuildableError | OutOfRangeError) -> Profil
         key, what = wrong.key, wrong.what
         given, allowed, fix = wrong.given, wrong.allowed, wrong.fix
     else:
-        key, what = ("stages",), f"lead out of what published formulas cover, in the {wrong.quantity}"
+        key, what = (
+            ("stages",),
+            f"lead out of what published formulas cover, in the {wrong.quantity}",
+        )
         given = f"{wrong.value:g} {wrong.unit}".replace(" -", "")
         allowed = f"{wrong.low:g} to {wrong.high:g} {wrong.unit} ({wrong.source})".replace(
             " - ", " "

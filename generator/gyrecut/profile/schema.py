@@ -5,6 +5,7 @@ from __future__ import annotations
 from copy import deepcopy
 from typing import Any
 
+from gyrecut.profile.air import OwnSource
 from gyrecut.profile.models import DustFeed, Printer, Profile, Stage
 
 DIALECT = "https://json-schema.org/draft/2020-12/schema"
@@ -63,8 +64,27 @@ def _has_range(option: dict[str, Any]) -> bool:
 def _rules(groups: dict[str, Any]) -> None:
     """Add the rules that take more than one key to see."""
     groups["Stage"]["oneOf"] = [_given(key) for key in Stage.SIZINGS]
-    own = [_given(key) for key in DustFeed.OWN]
-    groups["DustFeed"]["anyOf"] = [_given("kind"), {"allOf": own}]
+    own = [_given(key) for key in DustFeed.OWN if key not in DustFeed.SIZES]
+    sizes = [_given(key) for key in DustFeed.SIZES]
+    sized = {"anyOf": [{"allOf": sizes}, _given("distribution")]}
+    groups["DustFeed"]["anyOf"] = [_given("kind"), {"allOf": [*own, sized]}]
+    groups["DustFeed"]["allOf"] = [
+        {"not": {"allOf": [_given("distribution"), {"anyOf": sizes}]}},
+    ]
+    ends = [_given(key) for key in OwnSource.ENDS]
+    drawn = {"anyOf": [*ends, _given("exponent")]}
+    forms = groups["Air"]["properties"]["source"]["anyOf"]
+    own_source = next(form for form in forms if "properties" in form)
+    own_source["oneOf"] = [
+        {"allOf": [_given("points"), {"not": drawn}]},
+        {"allOf": [*ends, {"not": _given("points")}]},
+    ]
+    counted = {"required": ["filter"], "properties": {"filter": _given("clean_loss")}}
+    groups["Air"]["allOf"] = [
+        {"anyOf": [_given("flow"), _given("source")]},
+        {"not": {"allOf": [_given("altitude"), _given("pressure")]}},
+        {"anyOf": [_given("flow"), {"not": counted}]},
+    ]
     groups["Printer"]["allOf"] = [
         {
             "if": {"properties": {"process": {"const": process}}, "required": ["process"]},
@@ -84,8 +104,8 @@ def _partial(group: dict[str, Any]) -> dict[str, Any]:
     rest = ("required", "oneOf", "anyOf", "allOf")
     part = {key: deepcopy(value) for key, value in group.items() if key not in rest}
     for key, value in part["properties"].items():
-        # what stands in a list replaces the list that is extended, and so is complete
-        if key not in ("stages", "proportions"):
+        # these replace what is extended as a whole, and so are complete
+        if key not in ("stages", "proportions", "source"):
             _point_to_parts(value)
     return part
 

@@ -84,7 +84,7 @@ class NameOr:
     @property
     def allowed(self) -> str:
         """The names, or the keys of the group."""
-        return f"{self.name.allowed}; or own values for {', '.join(self.group().model_fields)}"
+        return f"{self.name.allowed}; or own values for {', '.join(self.group().fields_by_key())}"
 
     @property
     def example(self) -> str:

@@ -18,8 +18,9 @@ description: a first separator  # what it is for, in your own words
 
 air:
   flow: 140 m3/h                # what your suction source really moves through the hose
+  # source: shop-vacuum         # what moves it; or {shut_off: 18 kPa, open_flow: 150 m3/h}
   temperature: 20 degC
-  altitude: 0 m                 # height of the workshop above the sea
+  altitude: 0 m                 # of the workshop, above the sea; or pressure: 1013 mbar
   relative_humidity: 50 %
   hose:                         # from the tool to the separator
     nominal: 38 mm              # the size it is sold as
@@ -28,14 +29,18 @@ air:
     length: 3 m
     wall: corrugated            # smooth or corrugated, seen from the inside
     bends: 2                    # right-angle bends it lies in
+  # pick_up: {kind: nozzle, diameter: 32 mm}  # nozzle, hood or open-hose
+  # filter: {area: 0.5 m2, class: M}          # behind the separator
+  # bin_leak: 0 %               # air that leaks into the bin
 
 dust:
   kind: hardwood-sanding        # from the catalogue; own values may stand beside it:
   # particle_density: 1400 kg/m3  # one grain
   # bulk_density: 200 kg/m3       # the loose heap
   # median: 30 um                 # half of the mass is finer
-  # spread: 2.5                   # geometric standard deviation
+  # spread: 2.5                   # geometric standard deviation; or a distribution for both
   # largest_chip: 2 mm            # longest piece to expect
+  # shape_factor: 1.3             # drag over that of a sphere
   feed: 150 g/h                 # what arrives in an hour of work
 
 stages:                         # in the order the air passes them

@@ -6,8 +6,12 @@ from math import radians
 from typing import TYPE_CHECKING
 
 from gyrecut.catalogue import families, hoses
-from gyrecut.correlations.geometry import CycloneGeometry, body_diameter_for_inlet_velocity
-from gyrecut.correlations.lapple import body_diameter_for_cut_size_lapple
+from gyrecut.correlations.consensus import central_cut_size
+from gyrecut.correlations.geometry import (
+    CycloneGeometry,
+    body_diameter_for_inlet_velocity,
+    scaled,
+)
 from gyrecut.errors import UnbuildableError
 from gyrecut.proportions.dimensions import Body, Dimensions, Joint, Slot
 from gyrecut.proportions.division import divide
@@ -34,6 +38,8 @@ if TYPE_CHECKING:
 SLOPE_SPARE = radians(1.0)  # facets of a mesh lean a little more than the surface they stand for
 EDGE_SHARE = 0.75  # of the wall is left at the slot's inner edge
 SMALLEST_BODY_MM, LARGEST_BODY_MM = 40.0, 900.0
+SLOWEST_COVERED, FASTEST_COVERED = 1.0, 60.0  # m/s in the slot
+HALVINGS = 60
 FIT_STEP = 0.98  # two sizes tried one after the other differ by this factor
 
 
@@ -66,7 +72,9 @@ def geometry_of(d: Dimensions) -> CycloneGeometry:
     )
 
 
-def proportion(profile: Profile, stage: Stage, *, air: AirState, dust: Dust) -> Dimensions:
+def proportion(
+    profile: Profile, stage: Stage, *, flow: float, air: AirState, dust: Dust
+) -> Dimensions:
     """Derive every dimension of one stage's separator.
 
     Parameters
@@ -74,7 +82,9 @@ def proportion(profile: Profile, stage: Stage, *, air: AirState, dust: Dust) -> 
     profile : Profile
         The whole profile: hose, outlet, printer, walls, joints.
     stage : Stage
-        The stage to proportion; its flow is the profile's shared by its `count` bodies.
+        The stage to proportion.
+    flow : float
+        Air through one of its bodies [m3/s].
     air : AirState
         The air, for a body sized by its cut size.
     dust : Dust
@@ -92,7 +102,6 @@ def proportion(profile: Profile, stage: Stage, *, air: AirState, dust: Dust) -> 
         Where the proportions or the size lie outside what the correlations hold for.
     """
     shape = shape_of(stage)
-    flow = profile.air.flow / stage.count
     if stage.fit_pieces is not None:
         return _largest_that_fits(profile, shape, stage.fit_pieces)
     if stage.body_diameter is not None:
@@ -102,19 +111,55 @@ def proportion(profile: Profile, stage: Stage, *, air: AirState, dust: Dust) -> 
             body_diameter_for_inlet_velocity(shape, inlet_velocity=stage.inlet_velocity, flow=flow)
         )
     elif stage.cut_size is not None:
-        diameter = float(
-            body_diameter_for_cut_size_lapple(
-                shape,
-                cut_size=stage.cut_size,
-                flow=flow,
-                particle_density=dust.particle_density,
-                air_density=air.density,
-                viscosity=air.viscosity,
-            )
+        diameter = _diameter_for_cut_size(
+            shape, cut_size=stage.cut_size, flow=flow, air=air, dust=dust
         )
     else:
         raise ValueError("a stage without a size; profiles are checked for it")
     return _proportion_at(profile, shape, round(diameter * MM, 1))
+
+
+def _diameter_for_cut_size(
+    shape: CycloneGeometry, *, cut_size: float, flow: float, air: AirState, dust: Dust
+) -> float:
+    """Body diameter [m] at which the central cut size is the wanted one; it grows with the body."""
+    slot = float(shape.slot_height * shape.slot_width)
+    # between the fastest and the slowest inlet the correlations cover
+    small, large = (
+        (flow / (FASTEST_COVERED * slot)) ** 0.5,
+        (flow / (SLOWEST_COVERED * slot)) ** 0.5,
+    )
+    for end, coarser in ((small := small * 1.0001, True), (large := large * 0.9999, False)):
+        reached = _cut_size_at(shape, end, flow=flow, air=air, dust=dust)
+        if (reached > cut_size) == coarser:
+            raise UnbuildableError(
+                key=("stages",),
+                what="ask for a cut size that no body of these proportions has at this flow",
+                given=f"cut_size: {cut_size * 1e6:g} um",
+                allowed=f"{'at least' if coarser else 'at most'} {reached * 1e6:.2g} um",
+                fix="give another cut size, or more bodies (count)",
+            )
+    for _ in range(HALVINGS):
+        middle = (small * large) ** 0.5
+        if _cut_size_at(shape, middle, flow=flow, air=air, dust=dust) < cut_size:
+            small = middle
+        else:
+            large = middle
+    return float((small * large) ** 0.5)
+
+
+def _cut_size_at(
+    shape: CycloneGeometry, diameter: float, *, flow: float, air: AirState, dust: Dust
+) -> float:
+    consensus = central_cut_size(
+        scaled(shape, body_diameter=diameter),
+        flow=flow,
+        particle_density=dust.particle_density,
+        shape_factor=dust.shape_factor,
+        loading=0.0,
+        air=air,
+    )
+    return float(consensus.cut_size)
 
 
 def _largest_that_fits(profile: Profile, shape: CycloneGeometry, pieces: int) -> Dimensions:

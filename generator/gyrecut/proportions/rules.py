@@ -43,7 +43,7 @@ def geometry_rules(
     air: AirState,
     dust: Dust,
     feed: float | None,
-    hose_flow: float,
+    hose_flow: float | None,
     printer: Printer,
 ) -> tuple[Finding, ...]:
     """Hold one body against the rules of the field.
@@ -62,8 +62,8 @@ def geometry_rules(
         The dust.
     feed : float or None
         Dust that arrives at this body [kg/s].
-    hose_flow : float
-        Air in the hose that leads to it [m3/s].
+    hose_flow : float or None
+        Air in the profile's hose [m3/s], None where another stage stands before this one.
     printer : Printer
         The profile's printer.
 
@@ -195,7 +195,9 @@ def _saltation(
         )
 
 
-def _hose(d: Dimensions, flow: float, dust: Dust) -> Iterator[Finding]:
+def _hose(d: Dimensions, flow: float | None, dust: Dust) -> Iterator[Finding]:
+    if flow is None:
+        return
     bore = d.transition.cuff.nominal_mm
     velocity = float(mean_velocity(flow=flow, bore=bore / MM))
     if velocity < dust.conveying_velocity:

@@ -1,0 +1,1 @@
+"""Whether walls, lid, joints and bin hold the suction: formulas in SI, and what they find."""
