@@ -173,7 +173,9 @@ def design(profile: Profile) -> Design:
         )
         if arriving is not None:
             arriving *= 1 - stage.forecast.kept_of_arriving
-    findings += outlook_findings(expected, dust=dust, leak=profile.air.bin_leak)
+    findings += outlook_findings(
+        expected, dust=dust, leak=profile.air.bin_leak, target=profile.air.flow
+    )
     findings += limit_findings(profile.limits, _totals(profile, stages))
     return Design(
         profile=profile,

@@ -10,6 +10,7 @@ import pytest
 from gyrecut.catalogue import (
     CatalogueError,
     Hose,
+    bin_materials,
     dusts,
     families,
     fasteners,
@@ -19,13 +20,13 @@ from gyrecut.catalogue import (
     sources,
 )
 from gyrecut.catalogue.loading import rows_from_text
-from gyrecut.catalogue.rows import Dust
+from gyrecut.catalogue.rows import Dust, Polymer
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Mapping
 
 TABLES: list[Callable[[], Mapping[str, Any]]] = [
-    *(families, dusts, polymers, hoses, fasteners, sources, filters)
+    *(families, dusts, polymers, hoses, fasteners, sources, filters, bin_materials)
 ]
 
 NAMES: dict[Callable[[], Mapping[str, Any]], list[str]] = {
@@ -52,6 +53,7 @@ NAMES: dict[Callable[[], Mapping[str, Any]], list[str]] = {
         "plastic-foam",
     ],
     polymers: ["PLA", "PETG", "ABS", "ASA", "PC", "PA12", "resin-standard", "resin-tough"],
+    bin_materials: ["HDPE", "steel", "plywood", "card-drum"],
     fasteners: ["M3", "M4", "M5", "M6"],
     sources: [
         "bypass-motor-two-stage",
@@ -105,6 +107,9 @@ def test_numbers_are_in_si() -> None:
         assert 0.5e9 < polymer.modulus < 5e9
         assert polymer.strength_across <= polymer.strength_along < 100e6
         assert 313.15 < polymer.softening_temperature < 473.15
+        assert 310.0 < polymer.service_temperature < polymer.softening_temperature
+        assert 0.3 <= polymer.poisson_ratio < 0.5
+        assert polymer.creep_ratio < polymer.direction_ratio < 1.0
 
 
 def test_a_dust_lies_looser_than_its_grains() -> None:
@@ -227,10 +232,18 @@ def test_only_an_exposure_limit_may_be_left_open() -> None:
 
 
 def test_a_process_other_than_the_two_is_refused() -> None:
+    columns = {field.name: "1.0" for field in fields(Polymer) if field.name != "name"}
+    columns |= {"title": "t", "source": "s", "process": "powder"}
+    body = "".join(f"  {key}: {value}\n" for key, value in columns.items())
     with pytest.raises(CatalogueError, match="column process cannot be 'powder'"):
-        rows_from_text(
-            "X: {title: X, process: powder, density: 1, modulus: 1, strength_along: 1, "
-            "strength_across: 1, softening_temperature: 1, source: none}",
-            type(polymers()["PLA"]),
-            table="polymers.yaml",
-        )
+        rows_from_text(f"X:\n{body}", Polymer, table="polymers.yaml")
+
+
+def test_bins_are_of_what_profiles_may_name() -> None:
+    materials = bin_materials()
+    assert {row.form for row in materials.values()} == {"round", "box"}
+    for row in materials.values():
+        assert 0 < row.creep_ratio <= 1
+        assert row.poisson_ratio < 0.5
+        assert row.strength < row.modulus / 50
+    assert materials["steel"].modulus == max(row.modulus for row in materials.values())

@@ -34,6 +34,24 @@ def limits() -> PrintLimits:
         smallest_wall_mm=0.8,
         overhang_limit=radians(45),
         bridge_limit_mm=8.0,
+        process="filament",
+        line_width_mm=0.4,
+        clearance_mm=0.2,
+    )
+
+
+@pytest.fixture(scope="session")
+def resin_limits() -> PrintLimits:
+    """An ordinary resin printer."""
+    return PrintLimits(
+        build_volume_mm=(150.0, 150.0, 200.0),
+        margin_mm=2.0,
+        smallest_wall_mm=1.0,
+        overhang_limit=radians(45),
+        bridge_limit_mm=5.0,
+        process="resin",
+        line_width_mm=0.05,
+        clearance_mm=0.1,
     )
 
 

@@ -11,8 +11,10 @@ import trimesh
 from cadquery.func import box, cylinder, extrude, face, polygon
 
 from gyrecut.checks import check_mesh, measure_mesh
+from gyrecut.checks.opposed import CHORD_MM
+from gyrecut.checks.sampling import spread_samples
 from gyrecut.checks.surface import surface_of
-from gyrecut.checks.thickness import CHORD_MM, EDGE_ANGLE, spread_samples
+from gyrecut.checks.thickness import EDGE_ANGLE
 from gyrecut.findings import Severity
 
 if TYPE_CHECKING:
@@ -85,10 +87,11 @@ def test_samples_cover_the_surface_by_area_and_do_not_change() -> None:
     mesh = trimesh.creation.box((60, 40, 2))
     mesh.apply_translation([0, 0, 1])
     surface = surface_of(mesh)
-    places, triangle = spread_samples(surface)
-    again, _ = spread_samples(surface)
-    np.testing.assert_array_equal(places, again)
-    share = np.bincount(triangle) / len(triangle)
+    samples = spread_samples(surface)
+    places = samples.places
+    np.testing.assert_array_equal(places, spread_samples(surface).places)
+    assert samples.weight.sum() == pytest.approx(mesh.area)
+    share = np.bincount(samples.triangle) / len(places)
     np.testing.assert_allclose(share, mesh.area_faces / mesh.area, atol=1e-3)
     # Seen from above, each quarter of the top has its quarter of the places.
     top = places[np.isclose(places[:, 2], 2)]

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from fractions import Fraction
 from math import pi
 
 import pint
@@ -10,9 +11,10 @@ from hypothesis import given
 from hypothesis import strategies as st
 from pydantic_core import PydanticCustomError
 
-from gyrecut.profile.quantities import SI, UNITS, Quantity
+from gyrecut.profile.quantities import DEFINITIONS, SI, UNITS, Quantity
 
 PLAIN: pint.UnitRegistry[float] = pint.UnitRegistry()
+EXACT: pint.UnitRegistry[Fraction] = pint.UnitRegistry(non_int_type=Fraction)
 ALL_UNITS = [(dimension, unit) for dimension, units in UNITS.items() for unit in units]
 
 # One of each unit in SI. Inch, foot, pound and US gallon are exact by definition (NIST SP 811,
@@ -58,6 +60,14 @@ def test_value_is_what_the_unit_library_says(
     # 1e-9 absolute: near absolute zero the library's float subtraction leaves rounding noise
     ours = anything(dimension).si(f"{number}{space}{unit}")
     assert ours == pytest.approx(float(library), rel=1e-12, abs=1e-9)
+
+
+@pytest.mark.parametrize(("dimension", "unit"), ALL_UNITS)
+def test_our_definitions_are_those_of_the_unit_library(dimension: str, unit: str) -> None:
+    written, si = UNITS[dimension][unit], SI[dimension]
+    number = Fraction(7, 3)
+    ours: pint.UnitRegistry[Fraction] = pint.UnitRegistry(DEFINITIONS, non_int_type=Fraction)
+    assert ours.Quantity(number, written).m_as(si) == EXACT.Quantity(number, written).m_as(si)
 
 
 @given(st.integers(min_value=1, max_value=10**6))

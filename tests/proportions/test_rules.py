@@ -71,7 +71,7 @@ def test_hose_too_slow_for_the_dust(luthier: Profile) -> None:
 def test_dust_outlet_against_chips_and_feed(luthier: Profile) -> None:
     chips = found(with_dust(luthier, largest_chip=0.03))["dust-outlet-bridges"]
     assert chips.limit == pytest.approx(90.0)
-    flood = found(with_dust(luthier, feed=0.4))["dust-outlet-too-narrow"]
+    flood = found(with_dust(luthier, feed=0.03, bulk_density=20.0))["dust-outlet-too-narrow"]
     assert flood.measured is not None
     assert flood.limit is not None
     assert flood.measured < flood.limit

@@ -48,6 +48,9 @@ class Range:
         OutOfRangeError
             Names the first value refused.
         """
+        # A search checks single numbers by the thousand; an array for each would cost the most.
+        if isinstance(value, float) and self.low <= value <= self.high:
+            return
         values = np.asarray(value, dtype=np.float64)
         inside = (values >= self.low) & (values <= self.high)
         if not inside.all():

@@ -24,7 +24,6 @@ from gyrecut.findings import Finding, Severity
 if TYPE_CHECKING:
     from numpy.typing import NDArray
 
-    from gyrecut.checks.limits import PrintLimits
     from gyrecut.checks.rays import RayCaster
     from gyrecut.checks.surface import Surface
 
@@ -36,7 +35,7 @@ OFF_CENTRE = (
 )  # of a column: rays that miss the edges of a design drawn in round numbers
 FAR_MM = 1e4  # above and below any printer
 LEAST_CUP_MM3 = 1000.0  # a millilitre; less drips off with the rest: common practice, no source
-LEAST_DEPTH_MM = 3.0  # shallower ones drain by surface tension and a tilt: same
+LEAST_DEPTH_MM = 5.0  # a shallower one, such as a groove for a cord, drains by a tilt: same
 DRAIN_MM = 3.0  # hole to let it out: common practice, no source
 
 
@@ -65,7 +64,7 @@ class Cup:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class _Columns:
-    """Air in columns: `low` and `high (ranks, nx, ny)`, NaN where there is none; `xy (nx, ny, 2)`."""
+    """Air in columns: `low`, `high (ranks, nx, ny)`, NaN where there is none; `xy (nx, ny, 2)`."""
 
     low: NDArray[np.float64]
     high: NDArray[np.float64]
@@ -152,11 +151,11 @@ def _cups(columns: _Columns, *, upside_down: bool) -> list[Cup]:
     )
     _, labels = connected_components(graph.tocsr(), directed=False)
     wet = np.flatnonzero(is_wet)
-    names, index = np.unique(labels[wet], return_inverse=True)
+    _, index = np.unique(labels[wet], return_inverse=True)
     volumes = np.bincount(index, weights=held[wet]) * columns.pitch_mm**2
     cups = []
-    for name in np.flatnonzero(volumes >= LEAST_CUP_MM3):
-        members = wet[index == name]
+    for number in np.flatnonzero(volumes >= LEAST_CUP_MM3):
+        members = wet[index == number]
         lowest = members[floor[members].argmin()]
         depth = float(level[members].max() - floor[lowest])
         if depth < LEAST_DEPTH_MM:
@@ -165,7 +164,7 @@ def _cups(columns: _Columns, *, upside_down: bool) -> list[Cup]:
         z = float(-floor[lowest] if upside_down else floor[lowest])
         cups.append(
             Cup(
-                volume_mm3=float(volumes[name]),
+                volume_mm3=float(volumes[number]),
                 depth_mm=depth,
                 drain_mm=(x, y, z),
                 is_upside_down=upside_down,

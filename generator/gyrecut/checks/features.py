@@ -13,6 +13,7 @@ the face opposite, on the one side of the surface or on the other.
 from __future__ import annotations
 
 from dataclasses import dataclass
+from math import cos
 from typing import TYPE_CHECKING
 
 import numpy as np
@@ -90,13 +91,11 @@ def measure_features(
 
     thin = _narrower(walls, max(limits.least_pin_mm, least))
     stance = look_round(caster, thin, limits.smallest_wall_mm, edge_angle=EDGE_ANGLE)
-    stands = ~stance.is_edge
-    is_pin = (
-        stands
-        & ~stance.is_wide
-        & is_narrow_both_ways(caster, thin, limits.least_pin_mm, limits.smallest_wall_mm)
-    )
-    is_lost = stands & ~stance.is_wide & ~is_pin & (thin.distance < least - CHORD_MM)
+    # The facets of a round pin are seldom parallel in pairs: only a blunter edge is none of it.
+    is_blunt = stance.is_edge & (thin.facing < cos(EDGE_ANGLE))
+    is_pin = is_narrow_both_ways(caster, thin, limits.least_pin_mm, limits.smallest_wall_mm)
+    is_pin &= ~is_blunt & ~stance.is_wide
+    is_lost = ~stance.is_edge & ~stance.is_wide & ~is_pin & (thin.distance < least - CHORD_MM)
     return Features(
         gap=_narrowest(narrow, ~outlook.is_edge & outlook.is_wide),
         hole=_narrowest(bores, is_hole),

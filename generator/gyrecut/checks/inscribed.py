@@ -7,7 +7,9 @@ is in the way, and rays from the middle of the ball, square to the face found, s
 facets that is the exact ball as long as a ray of the fan met the facet it rests on.
 
 At a convex edge balls shrink to nothing. Those rest on a face that leans more than `GRAZING` from
-opposite; they are caught in the edge and say nothing about a wall.
+opposite, and are clearly less than the ray is long; they are caught in the edge and say nothing
+about a wall. Between rays of the fan a reentrant edge may go unseen, and so does the next facet of
+a round wall, which would make a ball beside their common edge tiny.
 """
 
 from __future__ import annotations
@@ -27,9 +29,9 @@ if TYPE_CHECKING:
     from numpy.typing import NDArray
 
 # Rings of the fan: lean from the inward normal, and rays on the ring.
-FAN = ((radians(30.0), 4), (radians(58.0), 6))
+FAN = ((radians(25.0), 5), (radians(48.0), 8), (radians(70.0), 10))
 SHRINKS = 3  # rays from the middle; on the solids of the tests a fourth changes nothing by 1e-3
-LESS = 0.99  # a face in the way must take this from the ball: in a sphere all faces touch it
+CAUGHT = 0.9  # of the ray; where facets stand for a round wall, many touch a ball almost alike
 DONE = 1 - 1e-4  # a ball that shrinks by less stays
 
 
@@ -66,7 +68,7 @@ def inscribed_balls(
     start = places + NUDGE_MM * along
     exits = caster.leave(start, along)
     radius = (exits.distance + NUDGE_MM) / 2
-    rests_on = exits.normal
+    of_ray, rests_on = radius, exits.normal
     level, upward = frame_of(along)
     for lean, count in FAN:
         for turn in np.arange(count) * 2 * pi / count:
@@ -75,7 +77,7 @@ def inscribed_balls(
             exits = caster.leave(start, ray)
             # Through the place and the exit; where the ray began is as good as the place.
             met = exits.distance / (2 * cos(lean)) + NUDGE_MM
-            is_less = met < LESS * radius
+            is_less = met < radius
             radius = np.where(is_less, met, radius)
             rests_on = np.where(is_less[:, None], exits.normal, rests_on)
     for _ in range(SHRINKS):
@@ -90,10 +92,9 @@ def inscribed_balls(
             break
         radius = np.where(is_less, met, radius)
         rests_on = np.where(is_less[:, None], exits.normal, rests_on)
-    opposite = np.einsum("ij,ij->i", rests_on, along)
-    return Inscribed(
-        diameter_mm=2 * radius, is_caught=~np.isfinite(radius) | (opposite < cos(GRAZING))
-    )
+    is_aslant = np.einsum("ij,ij->i", rests_on, along) < cos(GRAZING)
+    is_caught = ~np.isfinite(radius) | (is_aslant & (radius < CAUGHT * of_ray))
+    return Inscribed(diameter_mm=2 * radius, is_caught=is_caught)
 
 
 def thickness_map(mesh: trimesh.Trimesh) -> NDArray[np.float32]:

@@ -3,19 +3,24 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from math import cos, radians
 from typing import TYPE_CHECKING
 
+import numpy as np
+
+from gyrecut.checks.captive import Cup, cup_findings, measure_cups
 from gyrecut.checks.closed import Closedness, closedness_findings, measure_closedness
 from gyrecut.checks.contact import Stance, measure_stance, stance_findings
-from gyrecut.checks.fit import fit_findings
-from gyrecut.checks.captive import Cup, cup_findings, measure_cups
 from gyrecut.checks.features import Features, feature_findings, measure_features
+from gyrecut.checks.fit import fit_findings
 from gyrecut.checks.opposed import opposed
 from gyrecut.checks.overhang import Overhang, measure_overhang, overhang_findings
 from gyrecut.checks.rays import RayCaster
 from gyrecut.checks.sampling import spread_samples
 from gyrecut.checks.surface import surface_of
 from gyrecut.checks.thickness import Thickness, measure_thickness, thickness_findings
+
+LEVEL = cos(radians(45.0))
 
 if TYPE_CHECKING:
     import trimesh
@@ -52,6 +57,8 @@ class SolidMeasures:
         Volume [mm3].
     area_mm2 : float
         Surface [mm2].
+    level_mm2 : float
+        What of it looks up or down more than sideways [mm2].
     triangles : int
         Triangles of the mesh.
     thickness : Thickness
@@ -69,6 +76,7 @@ class SolidMeasures:
     size_mm: tuple[float, float, float]
     volume_mm3: float
     area_mm2: float
+    level_mm2: float
     triangles: int
     thickness: Thickness
     features: Features
@@ -110,6 +118,7 @@ def measure_mesh(mesh: trimesh.Trimesh, limits: PrintLimits) -> PieceMeasures:
             size_mm=(width, depth, height),
             volume_mm3=closedness.volume_mm3,
             area_mm2=area,
+            level_mm2=float(surface.areas[np.abs(surface.normals[:, 2]) > LEVEL].sum()),
             triangles=len(surface.faces),
             thickness=measure_thickness(caster, walls, limits.smallest_wall_mm, area),
             features=measure_features(caster, walls, gaps, limits),

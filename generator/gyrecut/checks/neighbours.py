@@ -196,7 +196,12 @@ def _depths(mine: _Side, theirs: RayCaster) -> tuple[NDArray[np.float64], NDArra
 
 
 def nearness_findings(
-    nearness: Nearness, pair: str, limits: PrintLimits, *, is_joint: bool
+    nearness: Nearness,
+    pair: str,
+    limits: PrintLimits,
+    *,
+    is_joint: bool,
+    chord_mm: float = CHORD_MM,
 ) -> tuple[Finding, ...]:
     """Say when two pieces share room, or when a joint between them is too tight.
 
@@ -210,6 +215,9 @@ def nearness_findings(
         With the clearance.
     is_joint : bool
         Whether one slides into the other. Pieces that are only screwed face to face may touch.
+    chord_mm : float
+        Chord error of both meshes. A joint is let pass when their facets could account for what
+        lacks; for a clearance of 0.1 mm mesh them finer than for printing [mm].
     """
     if nearness.depth_mm > TOUCH_MM:
         x, y, z = nearness.depth_place_mm
@@ -227,7 +235,7 @@ def nearness_findings(
                 fix="make room on one of them",
             ),
         )
-    tightest = limits.clearance_mm - TOUCH_MM - ROUNDING_MM
+    tightest = limits.clearance_mm - 2 * chord_mm - ROUNDING_MM
     if is_joint and nearness.sliding_mm < tightest:
         x, y, z = nearness.sliding_place_mm
         return (

@@ -24,8 +24,7 @@ if TYPE_CHECKING:
     from numpy.typing import NDArray
 
     from gyrecut.checks.limits import PrintLimits
-    from gyrecut.checks.lows import lows_of
-from gyrecut.checks.surface import Surface
+    from gyrecut.checks.surface import Surface
 
 SLACK = radians(0.5)  # a lean at the limit passes, whatever its last digit
 ROUNDING_MM = 0.01  # a span at the limit passes, whatever its last digit

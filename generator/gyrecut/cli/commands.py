@@ -88,7 +88,18 @@ def new(
 
 
 @app.command()
-def size(profile: ProfilePath, as_json: AsJson = False, quiet: Quiet = False) -> Reply:
+def size(
+    profile: ProfilePath,
+    explain: Annotated[
+        bool,
+        typer.Option(
+            "--explain",
+            help="Add to each number its formula, the numbers put in, and the source.",
+        ),
+    ] = False,
+    as_json: AsJson = False,
+    quiet: Quiet = False,
+) -> Reply:
     """Say its size, its catch and its cost; nothing is built."""
     from gyrecut.cli.designing import designed
     from gyrecut.cli.findings import exit_code_of
@@ -97,12 +108,18 @@ def size(profile: ProfilePath, as_json: AsJson = False, quiet: Quiet = False) ->
 
     design = designed(profile, load_profile(profile))
     code = exit_code_of(design.findings)
+    result, show = design.as_document(), partial(show_design, design)
+    if explain:
+        from gyrecut.cli.explain import explained, explanations, with_explanations
+
+        lines = explanations(design)
+        result, show = explained(result, lines), partial(with_explanations, show, lines)
     if code == FINE:
         tell(f"When it suits you: gyrecut build {quote(str(profile))}", quiet=quiet)
     return Reply(
         command="size",
-        result=design.as_document(),
-        show=partial(show_design, design),
+        result=result,
+        show=show,
         as_json=as_json,
         exit_code=code,
     )
@@ -148,7 +165,10 @@ def build(
 def list_(
     table: Annotated[
         str,
-        typer.Argument(metavar="TABLE", help="families, dusts, polymers, hoses or fasteners."),
+        typer.Argument(
+            metavar="TABLE",
+            help="families, dusts, polymers, hoses, sources, filters, fasteners or measured.",
+        ),
     ],
     as_json: AsJson = False,
     quiet: Quiet = False,  # noqa: ARG001 - taken by every command, and here there is nothing to hush

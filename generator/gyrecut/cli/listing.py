@@ -8,14 +8,29 @@ from operator import attrgetter
 from typing import TYPE_CHECKING, Any
 
 from gyrecut import catalogue
-from gyrecut.cli.figures import degrees_celsius, entry, megapascals, millimetres
+from gyrecut.cli.figures import (
+    cubic_metres_an_hour,
+    degrees_celsius,
+    entry,
+    megapascals,
+    millimetres,
+)
 from gyrecut.cli.tables import print_table
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Iterable, Mapping
     from typing import TextIO
 
-    from gyrecut.catalogue import Dust, Family, Fastener, Hose, Polymer
+    from gyrecut.catalogue import (
+        Dust,
+        Family,
+        Fastener,
+        FilterClass,
+        Hose,
+        MeasuredPoint,
+        Polymer,
+        SuctionSource,
+    )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -109,6 +124,42 @@ def _fastener(row: Fastener) -> Iterable[str]:
     )
 
 
+def _suction_source(row: SuctionSource) -> Iterable[str]:
+    return (
+        row.name,
+        row.title,
+        entry(row.shut_off),
+        cubic_metres_an_hour(row.open_flow),
+        entry(row.exponent),
+    )
+
+
+def _filter(row: FilterClass) -> Iterable[str]:
+    through = (row.penetration, row.fine, row.middle, row.coarse)
+    return (
+        row.name,
+        row.title,
+        *(entry(None if share is None else 100 * share) for share in through),
+        "yes" if row.dust_class else "no",
+        entry(row.lowest_limit),
+        entry(row.clean_resistance),
+    )
+
+
+def _measured(row: MeasuredPoint) -> Iterable[str]:
+    return (
+        row.name,
+        row.title,
+        row.grade,
+        row.mark,
+        millimetres(row.body_diameter),
+        cubic_metres_an_hour(row.flow),
+        entry(row.cut_size * 1e6),
+        row.diameter_kind,
+        entry(row.inlet_velocity_heads),
+    )
+
+
 VIEWS = {
     "families": _View(
         rows=catalogue.families,
@@ -148,6 +199,39 @@ VIEWS = {
         note="Diameter in mm, as the name says it. Measure your own hose: it may differ by 1 mm.",
         columns=("name", "#diameter"),
         cells=_hose,
+    ),
+    "sources": _View(
+        rows=catalogue.sources,
+        note="Suction behind a blocked hose in Pa, flow with nothing in its way in m3/h, and how "
+        "far the curve between is bent outwards (1: straight). Invented curves of the usual size: "
+        "whoever knows their own machine writes its points in the profile.",
+        columns=("name", "source of suction", "#shut-off", "#open flow", "#exponent"),
+        cells=_suction_source,
+    ),
+    "filters": _View(
+        rows=catalogue.filters,
+        note="What the class lets through at most, in % of all particles together and of those of "
+        "0.3-1, 1-3 and 3-10 um (an empty place: the class says nothing); whether it is one for "
+        "extractors of harmful dust, and down to which exposure limit in mg/m3; resistance of the "
+        "clean cloth in Pa s/m, about. Cloth bought loose has no class.",
+        columns=(
+            "name", "class", "#all", "#fine", "#middle", "#coarse", "dust class", "#limit from",
+            "#resistance",
+        ),
+        cells=_filter,
+    ),
+    "measured": _View(
+        rows=catalogue.measured_points,
+        note="Measured cyclones that the models are held against: body in mm, flow in m3/h, cut "
+        "size in um and which diameter it is, pressure drop in inlet velocity heads (an empty "
+        "place: not measured). Grade A: read in its source; B: from memory, confirmed by a second "
+        "number from memory; C: from memory, unchecked. Only A and B decide which model is trusted "
+        "and how wide the bands are.",
+        columns=(
+            "name", "cyclone", "grade", "known by", "#body", "#flow", "#cut size", "diameter",
+            "#heads",
+        ),
+        cells=_measured,
     ),
     "fasteners": _View(
         rows=catalogue.fasteners,

@@ -121,7 +121,8 @@ def central_cut_size(
     air : AirState
         The air, all of it in SI [-]
     friction_scale : float or ndarray
-        Wall friction over the one assumed; a rough wall has more [-]
+        Wall friction over the one assumed; a rough wall has more. Of no effect below 20 000, where
+        the friction is that of a smooth wall [-]
 
     Returns
     -------

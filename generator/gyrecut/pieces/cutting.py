@@ -4,9 +4,9 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
-from cadquery.func import Solid, Vector, clean
+from cadquery.func import Solid, Vector
 
-from gyrecut.solids.shapes import common, joined, one_solid, revolved, sound, without
+from gyrecut.solids.shapes import common, joined, revolved, sound, without
 from gyrecut.solids.sockets import collar
 
 if TYPE_CHECKING:
@@ -49,7 +49,7 @@ def rings(body: Solid, d: Dimensions) -> tuple[Solid, ...]:
                 common(name, below_keel, slab),
                 collar(d.body, d.joint, ring.top_mm, gusset=d.slope),
             )
-        cut.append(sound(name, one_solid(clean(piece), name)))
+        cut.append(sound(name, piece))
     return tuple(cut)
 
 

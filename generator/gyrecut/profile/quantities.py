@@ -75,13 +75,41 @@ SI: Mapping[str, str] = MappingProxyType(
     }
 )
 
+# The library's own definitions of no more than these units: to read all of its thousand would take
+# most of the time that `size` takes. The tests hold each against the library as it comes.
+DEFINITIONS = (
+    "centi- = 1e-2 = c-",
+    "micro- = 1e-6 = u-",
+    "milli- = 1e-3 = m-",
+    "kilo- = 1e3 = k-",
+    "meter = [length] = m",
+    "gram = [mass] = g",
+    "second = [time] = s",
+    "minute = 60 * second = min",
+    "hour = 60 * minute",
+    "inch = 0.0254 * meter",
+    "foot = 12 * inch",
+    "pound = 453.59237 * gram",
+    "liter = 1e-3 * meter ** 3",
+    "gallon = 231 * inch ** 3",
+    "pascal = kilogram / meter / second ** 2 = Pa",
+    "mbar = 100 * pascal",
+    "inH2O = 249.08891 * pascal",
+    "radian = []",
+    "degree = 3.1415926535897932384626433832795028841971693993751 / 180 * radian",
+    "percent = 0.01",
+    "kelvin = [temperature]; offset: 0 = K",
+    "degree_Celsius = kelvin; offset: 273.15 = degC",
+    "degree_Fahrenheit = 5 / 9 * kelvin; offset: 233.15 + 200 / 9 = degF",
+)
+
 
 @cache
 def _registry() -> pint.UnitRegistry[Fraction]:
-    import pint  # noqa: PLC0415 - 0.2 s that no command pays before it reads a profile
+    import pint  # noqa: PLC0415 - no command pays for it before it reads a profile
 
     # Fractions make "1.5 in" and "38.1 mm" the same float, and so the same profile hash.
-    return pint.UnitRegistry(non_int_type=Fraction)
+    return pint.UnitRegistry(DEFINITIONS, non_int_type=Fraction)
 
 
 @cache

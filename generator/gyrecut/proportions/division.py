@@ -3,7 +3,8 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from math import atan2, ceil, cos, degrees, hypot, inf, pi, tan
+from itertools import pairwise
+from math import atan2, ceil, cos, degrees, hypot, inf, pi, sin, tan
 from typing import TYPE_CHECKING
 
 import numpy as np
@@ -12,6 +13,8 @@ from gyrecut.errors import UnbuildableError
 from gyrecut.proportions.dimensions import Division, Ring, keel_bottom
 
 if TYPE_CHECKING:
+    from collections.abc import Iterator
+
     from numpy.typing import NDArray
 
     from gyrecut.proportions.dimensions import Body, Joint, Portal, Rim
@@ -22,6 +25,9 @@ ARC_STEPS = 24
 TURNS = np.deg2rad(np.arange(0.0, 180.0, 1.0))
 SPARE_MM = 0.5
 KEEL_LAND_MM = 2.0  # width the cut keel stands on
+MORE_RINGS = 6  # than the printer's height asks for, so that each stands steady
+STEADY_FOOT = 0.12  # radius of a ring's foot over its height; common practice, no source
+STEADY_LEAN = 0.97
 
 
 def best_turn(outline_mm: NDArray[np.float64], bed: Bed) -> tuple[float, bool]:
@@ -173,20 +179,34 @@ def divide(
         Where a ring, a sector or the slot does not fit the printer.
     """
     top = _top_plan(body, portal, rim, joint)
-    heights = _cut_heights(
-        body=body,
-        portal=portal,
-        joint=joint,
-        bed=bed,
-        slope=slope,
-        # a sector with the portal would tip over on its arc alone: let it stand on the keel
-        on_keel=not best_turn(_outline(top, 0.0, 2 * pi), bed)[1],
-    )
+    # a sector with the portal would tip over on its arc alone: let it stand on the keel
+    on_keel = not best_turn(_outline(top, 0.0, 2 * pi), bed)[1]
+    unsteady: tuple[Ring, ...] | None = None
+    for heights in _cut_heights(
+        body=body, portal=portal, joint=joint, bed=bed, slope=slope, on_keel=on_keel
+    ):
+        rings = _rings(heights, body=body, top=top, joint=joint, bed=bed)
+        if all(_is_steady(ring, body) for ring in rings):
+            break
+        unsteady = unsteady or rings
+    else:
+        if unsteady is None:
+            raise _no_way_to_cut(body, portal, joint, bed)
+        rings = unsteady
+    found = _sectors(top, bed, rings[0].first_cut + pi / max(rings[0].sectors, 2) / 2)
+    if found is None:
+        raise _too_wide("the lid", top, bed)
+    return Division(rings=rings, lid_sectors=found[0], lid_first_cut=found[1])
+
+
+def _rings(
+    heights: tuple[float, ...], *, body: Body, top: _Plan, joint: Joint, bed: Bed
+) -> tuple[Ring, ...]:
+    """Give the rings between cut heights, each in as few sectors as fit."""
     rings = []
-    tops = (0.0, *heights)
-    bottoms = (*heights, -body.total_height_mm)
     stagger = 0.0
-    for index, (high, low) in enumerate(zip(tops, bottoms, strict=True)):
+    edges = (0.0, *heights, -body.total_height_mm)
+    for index, (high, low) in enumerate(pairwise(edges)):
         plan = _ring_plan(body, joint, high) if index else top
         found = _sectors(plan, bed, stagger)
         if found is None:
@@ -195,20 +215,27 @@ def divide(
         # half a sector on, so that no seam stands above the next
         stagger = first + pi / count
         rings.append(Ring(top_mm=high, bottom_mm=low, sectors=count, first_cut=first))
-    found = _sectors(top, bed, rings[0].first_cut + pi / max(rings[0].sectors, 2) / 2)
-    if found is None:
-        raise _too_wide("the lid", top, bed)
-    return Division(rings=tuple(rings), lid_sectors=found[0], lid_first_cut=found[1])
+    return tuple(rings)
+
+
+def _is_steady(ring: Ring, body: Body) -> bool:
+    """Say whether a ring, or a sector of it, stands on its foot while it is printed."""
+    foot, head = body.inside_radius_at(ring.bottom_mm), body.outside_radius_at(ring.top_mm)
+    if ring.sectors == 1:
+        return foot >= STEADY_FOOT * ring.height_mm
+    # the middle of a leaning arc must not hang out beyond the arc it stands on
+    half = pi / ring.sectors
+    return sin(half) / half * (foot + head) / 2 <= STEADY_LEAN * foot
 
 
 def _cut_heights(
     *, body: Body, portal: Portal, joint: Joint, bed: Bed, slope: float, on_keel: bool
-) -> tuple[float, ...]:
-    """Heights of the ring cuts from the top down."""
+) -> Iterator[tuple[float, ...]]:
+    """Heights of the ring cuts from the top down, the fewest cuts that fit first."""
     total = body.total_height_mm
     if total <= bed.height_mm:
-        return ()
-    least = -portal.frame_bottom_z_mm + joint.lap_mm + joint.clearance_mm + SPARE_MM
+        yield ()
+    least = _least_first_ring(portal, joint)
     if least > bed.height_mm:
         raise UnbuildableError(
             key=("printer", "build_volume"),
@@ -218,7 +245,7 @@ def _cut_heights(
             fix="choose a smaller body, a family with a lower slot, or a taller printer",
         )
     usable = bed.height_mm - joint.lap_mm
-    for rest in range(1, ceil(total / max(usable, 1.0)) + 2):
+    for rest in range(1, ceil(total / max(usable, 1.0)) + 1 + MORE_RINGS):
         even = (total + rest * joint.lap_mm) / (rest + 1)
         first = _clear_of_keel(
             min(max(even, least), bed.height_mm),
@@ -234,14 +261,22 @@ def _cut_heights(
             continue
         height = (total - first) / rest
         if height <= usable and height > 2 * joint.lap_mm:
-            return tuple(-first - height * k for k in range(rest))
-    raise UnbuildableError(
+            yield tuple(-first - height * k for k in range(rest))
+
+
+def _no_way_to_cut(body: Body, portal: Portal, joint: Joint, bed: Bed) -> UnbuildableError:
+    return UnbuildableError(
         key=("printer", "build_volume"),
         what="leaves no way to cut the body into rings",
-        given=f"{bed.height_mm:.0f} mm of height, and a body of {total:.0f} mm",
-        allowed=f"a first ring of at least {least:.0f} mm, clear of the keel under the slot",
+        given=f"{bed.height_mm:.0f} mm of height, and a body of {body.total_height_mm:.0f} mm",
+        allowed=f"a first ring of at least {_least_first_ring(portal, joint):.0f} mm, clear of the "
+        "keel under the slot",
         fix="choose another size of the stage, or a taller printer",
     )
+
+
+def _least_first_ring(portal: Portal, joint: Joint) -> float:
+    return -portal.frame_bottom_z_mm + joint.lap_mm + joint.clearance_mm + SPARE_MM
 
 
 def _clear_of_keel(

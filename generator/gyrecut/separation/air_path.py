@@ -251,10 +251,11 @@ def _way_in(profile: Profile, condition: Condition) -> tuple[tuple[str, Element]
         step = (
             ("step to the hose", Transition(from_bore=opening, to_bore=bore, included_angle=pi)),
         )
-    return (("pick-up", pick_up), *step, ("hose", _hose(profile)))
+    return (("pick-up", pick_up), *step, ("hose", hose_of(profile)))
 
 
-def _hose(profile: Profile) -> Hose:
+def hose_of(profile: Profile) -> Hose:
+    """Give the hose as a part of the air's way."""
     hose = profile.air.hose
     return Hose(
         bore=hose_bore(profile),

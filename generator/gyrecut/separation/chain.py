@@ -77,9 +77,15 @@ class Passed:
 
     @property
     def kept_in_all(self) -> Numbers:
-        """Share of the feed's mass that all stages together keep."""
-        kept: Numbers = 1.0 - self.passing.sum(axis=-1)
+        """Share of the feed's mass that all stages together keep; 0 where none keeps any."""
+        kept: Numbers = np.minimum(sum(self.kept, start=0.0), 1.0)
         return kept
+
+    @property
+    def passing_in_all(self) -> Numbers:
+        """Share of the feed's mass that passes; has its digits where it is tiny."""
+        passing: Numbers = self.passing.sum(axis=-1)
+        return passing
 
 
 def through(

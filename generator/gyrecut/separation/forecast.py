@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING
 
 import numpy as np
 
-from gyrecut.airflow.filters import filter_life, filter_load_at_limit
+from gyrecut.airflow.filters import DUST_RATE, filter_life, filter_load_at_limit
 from gyrecut.catalogue import filters
 from gyrecut.correlations.consensus import SLOPE
 from gyrecut.correlations.geometry import mean_inlet_velocity
@@ -15,9 +15,11 @@ from gyrecut.correlations.loading import penetration_factor
 from gyrecut.correlations.natural_length import natural_length_alexander
 from gyrecut.correlations.saltation import saltation_velocity_kalen_zenz
 from gyrecut.correlations.saturation import SATURATING_LOADING, share_skimmed_muschelknautz
+from gyrecut.correlations.validity import INLET_VELOCITY
 from gyrecut.separation.air_path import (
     CLEAN,
     Condition,
+    cyclones,
     filter_of,
     hose_bore,
     suction_source,
@@ -90,8 +92,9 @@ class Catch:
         Share of the mass kept, central [-]
     spread : Spread
         The same with its 90 % range.
-    kept_when_choked : float
-        The same with most of the pick-up covered [-]
+    kept_when_choked : float or None
+        The same with most of the pick-up covered; None where the air then gets slower than the
+        models cover [-]
     passing_median : float
         Mass median of what passes [m]
     skimmed_at_most : float or None
@@ -107,7 +110,7 @@ class Catch:
 
     kept: float
     spread: Spread
-    kept_when_choked: float
+    kept_when_choked: float | None
     passing_median: float
     skimmed_at_most: float | None
     loading_factor: float | None
@@ -126,7 +129,8 @@ class FilterOutlook:
     face_velocity : float
         Flow over cloth area [m/s]
     life : float or None
-        Working time until its limit [s]; None without a limit or a feed.
+        Working time until its limit [s]; None without a limit or a feed, or where hardly any dust
+        arrives.
     after_filter : float or None
         Dust behind it, by the class's penetration [mg/m^3]; None where the class gives none.
     exposure_limit : float or None
@@ -241,9 +245,6 @@ def forecast(
     passed = through(
         steps, grains, flow=clean.flow, loading=loading, leak=leak, air=air, slope=SLOPE
     )
-    when_choked = through(
-        steps, grains, flow=choked.flow, loading=loading, leak=leak, air=air, slope=SLOPE
-    )
     forecasts = _stages(steps, dust, passed.kept, flow=clean.flow, loading=loading, air=air)
     kept = float(passed.kept_in_all)
     catch = Catch(
@@ -259,11 +260,13 @@ def forecast(
             doubt=doubt,
             seed=seed,
         ),
-        kept_when_choked=float(when_choked.kept_in_all),
+        kept_when_choked=_kept_when_choked(
+            steps, grains, flow=choked.flow, loading=loading, leak=leak, air=air
+        ),
         passing_median=median_of(bins.sizes, passed.passing),
         skimmed_at_most=_skimmed(forecasts[0], sizes, loading),
         loading_factor=_loading_factor(loading * air.density),
-        to_filter=None if feed is None else feed * (1 - kept),
+        to_filter=None if feed is None else feed * float(passed.passing_in_all),
         bin_fill_time=(
             None
             if feed is None or kept <= 0
@@ -287,8 +290,8 @@ def forecast(
         safe_suction=clean.suction
         + sum(
             safe_pressure_drop(step.geometry, flow=clean.flow / step.copies, air=air)
-            - stage.pressure_drop.central
-            for step, stage in zip(steps, forecasts, strict=True)
+            - float(cyclones(step).pressure_drop(clean.flow, air=air))
+            for step in steps
         ),
         filter=outlook,
     )
@@ -369,6 +372,26 @@ def _stages(
     return tuple(made)
 
 
+def _kept_when_choked(
+    steps: tuple[Step, ...],
+    grains: Grains,
+    *,
+    flow: float,
+    loading: float,
+    leak: float,
+    air: AirState,
+) -> float | None:
+    """Give the catch with most of the pick-up covered, None below the slowest inlet covered."""
+    slowest = min(
+        flow / step.copies / float(step.geometry.slot_height * step.geometry.slot_width)
+        for step in steps
+    )
+    if slowest < INLET_VELOCITY.low:
+        return None
+    passed = through(steps, grains, flow=flow, loading=loading, leak=leak, air=air, slope=SLOPE)
+    return float(passed.kept_in_all)
+
+
 def _skimmed(first: StageForecast, sizes: SizeDistribution, loading: float) -> float | None:
     if loading < SATURATING_LOADING.low:
         return None
@@ -406,11 +429,12 @@ def _filter(
             )
         )
     life = None
-    if load is not None and load > 0 and catch.to_filter:
-        life = float(filter_life(cake_load=load, area=cloth.area, dust_rate=catch.to_filter))
+    arriving = catch.to_filter
+    if load is not None and load > 0 and arriving is not None and arriving >= DUST_RATE.low:
+        life = float(filter_life(cake_load=load, area=cloth.area, dust_rate=arriving))
     after = None
-    if row.penetration is not None and catch.to_filter is not None:
-        after = row.penetration * catch.to_filter / flow / MILLIGRAM
+    if row.penetration is not None and arriving is not None:
+        after = row.penetration * arriving / flow / MILLIGRAM
     outlook = FilterOutlook(
         filter_class=row.name,
         face_velocity=face,

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from itertools import takewhile
 from math import pi
 from typing import TYPE_CHECKING
 
@@ -13,7 +14,7 @@ if TYPE_CHECKING:
     from gyrecut.airflow.suction import SuctionCurve
     from gyrecut.airflow.system import PressureShare, SystemCurve
 
-HALVINGS = 80  # 2^-80 of the open flow: beyond the last digit
+HALVINGS = 80  # 2^-80 of the open flow: beyond the last digit, where it ends sooner
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -29,7 +30,7 @@ class OperatingPoint:
     hose_velocity : float
         Mean velocity in the hose [m/s]
     tool_suction : float
-        Static suction just behind the pick-up [Pa]
+        Static suction at the beginning of the hose, just behind the pick-up [Pa]
     air_power : float
         Flow times the suction at the tool [W]
     shares : tuple of PressureShare
@@ -60,6 +61,8 @@ def bisected(falling: Callable[[float], float], *, low: float, high: float) -> f
     """Find the root of a function that falls from above zero at `low` to below it at `high`."""
     for _ in range(HALVINGS):
         middle = (low + high) / 2
+        if middle in (low, high):  # no number lies between
+            break
         if falling(middle) > 0:
             low = middle
         else:
@@ -77,7 +80,7 @@ def point_at(
     flow : float
         Through the machine [m^3/s]
     system : SystemCurve
-        The way of the air, its first part the pick-up.
+        The way of the air, with a part called "hose"; what comes before it is the pick-up.
     suction : float
         That the source gives there [Pa]
     bore : float
@@ -94,7 +97,8 @@ def point_at(
         for share in system.shares(flow, air=air)
     )
     velocity = 4 * flow / (pi * bore**2)
-    tool = float(shares[0].pressure_drop) + air.density * velocity**2 / 2
+    ahead = takewhile(lambda share: share.name != "hose", shares)
+    tool = sum(float(share.pressure_drop) for share in ahead) + air.density * velocity**2 / 2
     return OperatingPoint(
         flow=flow,
         suction=suction,

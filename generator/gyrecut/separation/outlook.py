@@ -25,6 +25,9 @@ if TYPE_CHECKING:
 
 MUCH_LEAK = 0.01  # 1 to 3 % visibly hurts: Perry's handbook and Strauss, from memory, weak
 SMALL_GAIN = 0.01  # of the whole mass: a stage that keeps less than this hardly pays
+# From here on the speed in body and hose is another one than what they were chosen for; within, no
+# source curve is known any better. Common practice, no source.
+FAR_FROM_TARGET = 0.15
 
 
 def sizing_flow(profile: Profile, *, dust: Dust, air: AirState) -> float:
@@ -83,7 +86,9 @@ def _slot_area(stage: Stage) -> float | None:
     return float(shape.slot_height * shape.slot_width) * stage.body_diameter**2 * stage.count
 
 
-def outlook_findings(expected: Forecast, *, dust: Dust, leak: float) -> Iterator[Finding]:
+def outlook_findings(
+    expected: Forecast, *, dust: Dust, leak: float, target: float | None
+) -> Iterator[Finding]:
     """Give what the forecast has to warn of.
 
     Parameters
@@ -94,11 +99,15 @@ def outlook_findings(expected: Forecast, *, dust: Dust, leak: float) -> Iterator
         The dust.
     leak : float
         Air drawn in through the dust outlet, as a share of the flow [-].
+    target : float or None
+        Flow that the profile sizes for [m3/s], None where its source alone decides.
 
     Yields
     ------
     Finding
     """
+    if target is not None:
+        yield from _target(expected.flow, target)
     yield from _flow(expected, dust)
     yield from _stages(expected)
     if leak > MUCH_LEAK:
@@ -116,6 +125,32 @@ def outlook_findings(expected: Forecast, *, dust: Dust, leak: float) -> Iterator
     yield from _filter(expected)
 
 
+def _target(settled: float, target: float) -> Iterator[Finding]:
+    if abs(settled - target) <= FAR_FROM_TARGET * target:
+        return
+    falls_short = settled < target
+    yield Finding(
+        code="flow-far-from-target",
+        severity=Severity.WARN,
+        part="source",
+        what=(
+            "The source moves far less air than the separator is sized for."
+            if falls_short
+            else "The source moves far more air than the separator is sized for."
+        ),
+        measured=settled * 3600,
+        limit=target * 3600,
+        unit="m3/h",
+        where="air.flow against the flow at which source and system meet",
+        fix=(
+            "Take a stronger source, a wider, shorter or smoother hose or more filter area, or "
+            "size for the flow that settles."
+            if falls_short
+            else "Size for the flow that settles, or take a weaker source."
+        ),
+    )
+
+
 def _flow(expected: Forecast, dust: Dust) -> Iterator[Finding]:
     choked = expected.choked
     if choked.hose_velocity < dust.conveying_velocity <= expected.clean.hose_velocity:
@@ -128,6 +163,18 @@ def _flow(expected: Forecast, dust: Dust) -> Iterator[Finding]:
             limit=dust.conveying_velocity,
             unit="m/s",
             where="hose, four fifths of the pick-up covered",
+            fix="Give the pick-up a relief_area, so that air keeps moving.",
+        )
+    if expected.catch.kept_when_choked is None:
+        yield Finding(
+            code="choked-out-of-range",
+            severity=Severity.NOTE,
+            part="hose",
+            what=(
+                "With most of the pick-up covered the air gets slower than any model covers; what "
+                "is then kept is not known."
+            ),
+            where="stages, four fifths of the pick-up covered",
             fix="Give the pick-up a relief_area, so that air keeps moving.",
         )
     loaded = expected.loaded

@@ -35,6 +35,7 @@ if TYPE_CHECKING:
 MM = 1000.0
 THICKEST_MM = 60.0
 BEGINS_TO_OPEN = 0.75  # of the suction to hold, so that it is wide open there: common practice
+MOST_KEPT = 0.9  # of the shut-off suction: an opening that keeps more of it is none
 
 
 def bin_holds_to(inputs: StrengthInputs) -> float:
@@ -89,7 +90,21 @@ def relief_findings(inputs: StrengthInputs, *, holds_to: float) -> Iterator[Find
     ------
     Finding
     """
-    if inputs.relief_setting is None and holds_to >= SAFETY_WITHOUT_RELIEF * inputs.shut_off:
+    setting = inputs.relief_setting
+    if setting is not None and not inputs.has_relief:
+        yield Finding(
+            code="relief-never-opens",
+            severity=Severity.WARN,
+            part="bin",
+            what="The source cannot draw as strongly as the relief is set, so it is none.",
+            measured=setting / KPA,
+            limit=inputs.shut_off / KPA,
+            unit="kPa",
+            where="relief setting against the source's shut-off suction",
+            fix="Set it lower, or leave it out.",
+        )
+        return
+    if setting is None and holds_to >= SAFETY_WITHOUT_RELIEF * inputs.shut_off:
         yield Finding(
             code="relief-not-needed",
             severity=Severity.NOTE,
@@ -100,10 +115,10 @@ def relief_findings(inputs: StrengthInputs, *, holds_to: float) -> Iterator[Find
             where="weakest of the three",
         )
         return
-    keep = min(
-        inputs.relief_setting or holds_to / SAFETY_WITH_RELIEF, inputs.shut_off, SUCTION.high
-    )
-    if keep < SUCTION.low:
+    kept = holds_to / SAFETY_WITH_RELIEF if setting is None else setting
+    keep = min(kept, MOST_KEPT * inputs.shut_off, SUCTION.high)
+    opens = BEGINS_TO_OPEN * keep
+    if opens < SUCTION.low:
         return  # nothing to keep: the findings on the part itself have said stop
     flow = float(flow_at_limit(shut_off=inputs.shut_off, open_flow=inputs.open_flow, limit=keep))
     diameter = float(
@@ -111,16 +126,15 @@ def relief_findings(inputs: StrengthInputs, *, holds_to: float) -> Iterator[Find
             flow=flow, suction=keep, air_density=inputs.air_density, discharge=SHARP_EDGED
         )
     )
-    opens = BEGINS_TO_OPEN * keep
-    push = f" and shut with {float(opening_force(diameter=diameter, suction=opens)):.1f} N"
-    fitted = inputs.relief_setting is not None
+    push = float(opening_force(diameter=diameter, suction=opens))
+    fitted = setting is not None
     yield Finding(
         code="relief-opening" if fitted else "relief-needed",
         severity=Severity.NOTE if fitted else Severity.WARN,
         part="bin",
         what=(
             f"A relief opening that keeps {keep / KPA:.2f} kPa has to be "
-            f"{diameter * MM:.0f} mm wide{push if diameter > 0 else ''}."
+            f"{diameter * MM:.0f} mm wide and kept shut with {push:.1f} N."
         ),
         measured=inputs.shut_off / KPA,
         limit=keep / KPA,
@@ -154,7 +168,7 @@ def _stronger(inputs: StrengthInputs) -> str:
     wall = least_bin_wall_mm(inputs)
     thicker = f"Take a bin with a wall of {wall:.1f} mm, " if wall is not None else "Take "
     hoop = "or one with hoops" if inputs.bin_material.form == "round" else "or one with ribs"
-    relief = "" if inputs.relief_setting is not None else ", or fit a relief opening"
+    relief = "" if inputs.has_relief else ", or fit a relief opening"
     return f"{thicker}{hoop if wall is not None else 'a stronger bin'}{relief}."
 
 

@@ -49,7 +49,7 @@ def joint_findings(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
         The rings as if the full bin hung from the lid, the laps as if glue alone bore the suction.
     """
     glue = max(d.joint.clearance_mm / MM, THINNEST_GLUE)
-    modulus = inputs.polymer.modulus * inputs.polymer.creep_ratio
+    modulus = inputs.polymer.modulus  # as the load comes on; the glue creeps as the walls do
     lap, wall = d.joint.lap_mm / MM, d.body.wall_mm / MM
 
     def peak(thickness: float) -> float:
@@ -67,7 +67,11 @@ def joint_findings(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
         narrowest = min(d.body.outside_radius_at(z) for z in d.division.cut_heights_mm)
         mean = lap_shear(force=hanging_weight(d, inputs), diameter=2 * narrowest / MM, lap=lap)
         yield _glued(
-            "ring joints", float(mean) * peak(wall), inputs, "the full bin hanging from the lid"
+            "ring joints",
+            float(mean) * peak(wall),
+            inputs,
+            load="the full bin hanging from the lid",
+            gravest=Severity.STOP,
         )
     if any(ring.sectors > 1 for ring in d.division.rings):
         hoop = inputs.design_suction * d.body.outer_radius_mm / MM / lap
@@ -75,7 +79,9 @@ def joint_findings(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
             "sector laps",
             hoop * peak(wall / 2),
             inputs,
-            f"{inputs.design_suction / KPA:.1f} kPa of suction",
+            load=f"{inputs.design_suction / KPA:.1f} kPa of suction",
+            # the steps of the laps bear on each other as well
+            gravest=Severity.WARN,
         )
 
 
@@ -186,10 +192,14 @@ def widest_pitch_mm(places_mm: tuple[Point, ...]) -> float:
     )
 
 
-def _glued(part: str, shear: float, inputs: StrengthInputs, load: str) -> Finding:
+def _glued(
+    part: str, shear: float, inputs: StrengthInputs, *, load: str, gravest: Severity
+) -> Finding:
     margin = HELD_SHARE * GLUE_STRENGTH / shear
     severity = severity_of(margin, inputs.safety_factor)
     holds = severity is Severity.NOTE
+    if severity is Severity.STOP:
+        severity = gravest
     return Finding(
         code="joints-hold" if holds else "joints-shear",
         severity=severity,
@@ -235,7 +245,8 @@ def _pitch(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
     by_bow = pitch * (BOW_SHARE * GASKET_SQUEEZE_MM / bow) ** 0.25
     widest = max(by_rule, by_bow)
     close = pitch <= widest
-    more = ceil(len(d.rim.screws.places_mm) * pitch / widest)
+    # and falls with the third of the thickness
+    enough = d.lid.thickness_mm * (bow / (BOW_SHARE * GASKET_SQUEEZE_MM)) ** (1 / 3)
     yield Finding(
         code="screws-near-enough" if close else "screws-far-apart",
         severity=Severity.NOTE if close else Severity.WARN,
@@ -249,5 +260,8 @@ def _pitch(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
         unit="mm",
         where="widest gap between the lid's screws; allowed by the bow of a strip of lid as wide "
         f"as the rim, or {by_rule:.0f} mm by half of the pitch in steel flanges",
-        fix="" if close else f"Take about {more} screws, a thicker walls.lid, or a softer gasket.",
+        fix=""
+        if close
+        else f"Give a walls.lid of at least {ceil(10 * enough) / 10:.1f} mm, or take a softer "
+        "gasket.",
     )

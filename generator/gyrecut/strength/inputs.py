@@ -86,6 +86,11 @@ class StrengthInputs:
     air_density: float
 
     @property
+    def has_relief(self) -> bool:
+        """Whether a relief opening ever opens."""
+        return self.relief_setting is not None and self.relief_setting < self.shut_off
+
+    @property
     def design_suction(self) -> float:
         """Suction that everything has to stand [Pa]: a blocked hose, or what a relief leaves."""
         if self.relief_setting is None:
@@ -95,7 +100,7 @@ class StrengthInputs:
     @property
     def safety_factor(self) -> float:
         """Margin to keep [-]."""
-        return SAFETY_WITHOUT_RELIEF if self.relief_setting is None else SAFETY_WITH_RELIEF
+        return SAFETY_WITH_RELIEF if self.has_relief else SAFETY_WITHOUT_RELIEF
 
 
 def assumed_source(*, flow: float, on_board: bool) -> AssumedSource:

@@ -24,7 +24,7 @@ DISCHARGE = Range(
 )
 SUCTION = Range(
     quantity="suction behind the opening",
-    low=1.0,
+    low=0.01,
     high=10e3,
     unit="Pa",
     source="air counted as not compressible: below 2 % up to 5 kPa, 4 % at 10 kPa",

@@ -185,7 +185,7 @@ def _cone(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
         measured=margin,
         limit=factor,
         where="from barrel to bin ring",
-        fix="" if holds else "Give a thicker walls.body; a ring at its top is not enough.",
+        fix="" if holds else "Give a thicker walls.body, or put rings round the cone as well.",
     )
 
 
@@ -201,7 +201,7 @@ def _stiffer(d: Dimensions, inputs: StrengthInputs) -> str:
             f"more than {rings.spacing_mm:.0f} mm apart, each {rings.breadth_mm:.1f} mm broad and "
             f"{rings.height_mm:.0f} mm high"
         )
-    if inputs.relief_setting is None:
+    if not inputs.has_relief:
         ways.append("fit a relief opening")
     text = ", or ".join(ways) or "choose a smaller body or a weaker source"
     return f"{text[0].upper()}{text[1:]}."
