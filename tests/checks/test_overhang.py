@@ -5,10 +5,11 @@ from __future__ import annotations
 from math import degrees, pi, radians, sqrt, tan
 from typing import TYPE_CHECKING
 
+import numpy as np
 import pytest
 from cadquery.func import box, cone, cylinder, extrude, face, polygon, revolve, sphere
 
-from gyrecut.checks import check_mesh, measure_mesh
+from gyrecut.checks import FacetClass, check_mesh, measure_mesh
 from gyrecut.findings import Severity
 
 if TYPE_CHECKING:
@@ -204,3 +205,41 @@ def test_findings_carry_area_and_bridges(mesh_of: MeshOf, limits: PrintLimits) -
     assert note.what.startswith("2 ceilings are bridged")
     assert note.measured == pytest.approx(6, rel=0.01)
     assert note.limit == limits.bridge_limit_mm
+
+
+def areas_by_class(shape: Shape, mesh_of: MeshOf, limits: PrintLimits) -> dict[FacetClass, float]:
+    mesh = mesh_of(shape)
+    solid = measure_mesh(mesh, limits).solid
+    assert solid is not None
+    classes = solid.overhang.classes
+    assert classes.dtype == np.int8
+    assert classes.shape == (len(mesh.faces),)
+    return {one: float(mesh.area_faces[classes == one].sum()) for one in FacetClass}
+
+
+def test_each_triangle_has_a_class(mesh_of: MeshOf, limits: PrintLimits) -> None:
+    # A slot of 6 mm is bridged, a ledge of 5 mm hangs, and the foot lies on the bed.
+    shape = box(40, 30, 20) - box(6, 30, 10) + box(50, 30, 4).moved(x=5, z=20)
+    areas = areas_by_class(shape, mesh_of, limits)
+    assert areas[FacetClass.BED] == pytest.approx(34 * 30)
+    assert areas[FacetClass.BRIDGE] == pytest.approx(6 * 30)
+    assert areas[FacetClass.HANGING] == pytest.approx(10 * 30)
+    assert sum(areas.values()) == pytest.approx(mesh_of(shape).area)
+
+
+@pytest.mark.parametrize("name", HANGS)
+def test_hanging_triangles_have_the_area_that_hangs(
+    name: str, mesh_of: MeshOf, limits: PrintLimits
+) -> None:
+    build, area, _ = HANGS[name]
+    hanging = areas_by_class(build(), mesh_of, limits)[FacetClass.HANGING]
+    # A triangle has one class, so a large one that is carried in part is wrong in part.
+    assert hanging == pytest.approx(area, rel=0.2)
+
+
+@pytest.mark.parametrize("name", PASSES)
+def test_no_triangle_hangs_on_what_prints(name: str, mesh_of: MeshOf, limits: PrintLimits) -> None:
+    areas = areas_by_class(PASSES[name][0](), mesh_of, limits)
+    assert areas[FacetClass.HANGING] == 0
+    if PASSES[name][1] is not None:
+        assert areas[FacetClass.BRIDGE] > 0

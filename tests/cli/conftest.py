@@ -6,12 +6,27 @@ import os
 import subprocess
 import sys
 from pathlib import Path
-from typing import Protocol
+from typing import TYPE_CHECKING, Any, Protocol
 
 import pytest
 
+from gyrecut import catalogue
+
+if TYPE_CHECKING:
+    from collections.abc import Callable, Mapping
+
 REPOSITORY = Path(__file__).parents[2]
 STAND_IN = Path(__file__).with_name("stand_in.py")
+TABLES: Mapping[str, Callable[[], Mapping[str, Any]]] = {
+    "families": catalogue.families,
+    "dusts": catalogue.dusts,
+    "polymers": catalogue.polymers,
+    "hoses": catalogue.hoses,
+    "sources": catalogue.sources,
+    "filters": catalogue.filters,
+    "fasteners": catalogue.fasteners,
+    "measured": catalogue.measured_points,
+}
 OURS = ("NO_COLOR", "FORCE_COLOR", "COLUMNS", "TERM", "GYRECUT_DEBUG", "PYTHONIOENCODING")
 
 

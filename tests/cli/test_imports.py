@@ -8,7 +8,7 @@ import sys
 from typing import TYPE_CHECKING
 
 import pytest
-from tests.cli.conftest import clean_environment
+from tests.cli.conftest import TABLES, clean_environment
 
 if TYPE_CHECKING:
     from pathlib import Path
@@ -62,7 +62,12 @@ def test_size_as_json_draws_no_tables(profile: Path) -> None:
     assert "rich" not in loaded_by("size", profile, "--json")
 
 
-@pytest.mark.parametrize("table", ["families", "dusts", "polymers", "hoses", "fasteners"])
+def test_explanations_are_loaded_when_asked_for(profile: Path) -> None:
+    assert not {name for name in loaded_by("size", profile) if "explain" in name}
+    assert "gyrecut.cli.explain_cut_size" in loaded_by("size", profile, "--explain")
+
+
+@pytest.mark.parametrize("table", TABLES)
 def test_list_loads_no_units_and_no_cad(table: str) -> None:
     assert not loaded_by("list", table) & (SLOW | {"pint", "numpy"})
 

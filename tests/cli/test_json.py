@@ -6,8 +6,9 @@ import json
 from typing import TYPE_CHECKING, Any
 
 import pytest
+from tests.cli.conftest import TABLES
 
-from gyrecut import __version__, catalogue
+from gyrecut import __version__
 
 if TYPE_CHECKING:
     import subprocess
@@ -31,7 +32,18 @@ def test_size(run: Run, profile: Path) -> None:
     assert (document["command"], document["exit_code"]) == ("size", 0)
     (stage,) = document["result"]["stages"]
     assert stage["dimensions"]["body"]["diameter_mm"] > 0
-    assert stage["prediction"]["cut_size_lapple"] > 0
+    forecast = document["result"]["forecast"]
+    (said,) = forecast["stages"]
+    assert 0 < said["cut_size"]["low"] < said["cut_size"]["central"] < said["cut_size"]["high"]
+    assert [word["model"] for word in said["cut_size"]["words"] if word["trusted"]] == [
+        "Muschelknautz, f >= 0.005",
+        "Barth, f 0.005",
+    ]
+    spread = forecast["catch"]["spread"]
+    assert 0 < spread["low"] < forecast["catch"]["kept"] < spread["high"] < 1
+    assert forecast["clean"]["suction"] == pytest.approx(
+        sum(share["pressure_drop"] for share in forecast["clean"]["shares"])
+    )
 
 
 def test_size_with_a_finding_that_says_stop(run: Run, profile: Path) -> None:
@@ -55,10 +67,10 @@ def test_new(run: Run) -> None:
     assert document["result"] == {"path": "a b.yaml", "name": "a-b"}
 
 
-@pytest.mark.parametrize("table", ["families", "dusts", "polymers", "hoses", "fasteners"])
+@pytest.mark.parametrize("table", TABLES)
 def test_list_gives_every_row_in_si(run: Run, table: str) -> None:
     document = only_document(run("list", table, "--json"))
-    rows = getattr(catalogue, table)()
+    rows = TABLES[table]()
     assert [row["name"] for row in document["result"]["rows"]] == list(rows)
     for row in document["result"]["rows"]:
         for key, value in row.items():

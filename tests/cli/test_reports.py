@@ -9,10 +9,12 @@ from dataclasses import replace
 from typing import TYPE_CHECKING
 
 import pytest
+from tests.cli.conftest import TABLES
 
-from gyrecut import catalogue, pipeline
+from gyrecut import pipeline
 from gyrecut.cli.figures import entry, figure, percent
 from gyrecut.cli.findings import exit_code_of
+from gyrecut.cli.listing import VIEWS
 from gyrecut.cli.size_report import sentences, show_design
 from gyrecut.findings import Finding, Severity
 from gyrecut.kit.cautions import cautions
@@ -28,6 +30,10 @@ COMPACT_ALL = {
     "softening_temperature": 338.15,
     "dust_is_combustible": True,
 }
+
+
+def test_tables_are_those_that_list_knows() -> None:
+    assert list(TABLES) == list(VIEWS)
 
 
 @pytest.fixture(scope="module")
@@ -49,22 +55,63 @@ def with_stages(design: pipeline.Design, *copies: int) -> pipeline.Design:
     return replace(design, stages=stages)
 
 
-def test_size_begins_with_size_catch_and_cost(run: Run, profile: Path) -> None:
-    (stage,) = json.loads(run("size", profile, "--json").stdout)["result"]["stages"]
-    body, prediction = stage["dimensions"]["body"], stage["prediction"]
-    text = " ".join(run("size", profile).stdout.split())
-    assert text.startswith(
+def test_size_begins_with_three_sentences_on_size_catch_and_cost(run: Run, profile: Path) -> None:
+    result = json.loads(run("size", profile, "--json").stdout)["result"]
+    body, forecast = result["stages"][0]["dimensions"]["body"], result["forecast"]
+    (stage,), catch, clean = forecast["stages"], forecast["catch"], forecast["clean"]
+    cut, drop, spread = stage["cut_size"], stage["pressure_drop"], catch["spread"]
+    text = run("size", profile).stdout
+    assert " ".join(text[: text.index("What to expect")].split()) == (
         f"luthier-sander: one cyclone, {body['diameter_mm']:.0f} mm across inside and "
         f"{body['total_height_mm']:.0f} mm tall from lid to dust outlet. "
-        f"First estimate of the catch: half of the grains of "
-        f"{prediction['cut_size_lapple'] * 1e6:.2f} um, more of the larger ones; "
-        f"it keeps {prediction['mass_kept'] * 100:.1f} % of this dust by mass. "
-        f"First estimate of the cost: {prediction['pressure_drop_shepherd_lapple']:.0f} Pa of "
-        "suction at 140 m3/h. "
+        f"It should keep {catch['kept'] * 100:.1f} % of this dust by mass, in 9 of 10 cases "
+        f"{spread['low'] * 100:.1f} to {spread['high'] * 100:.1f} %; of grains of "
+        f"{cut['central'] * 1e6:.2f} um it keeps half, of larger ones more. "
+        f"It takes {drop['central']:.0f} Pa of suction, {drop['low']:.0f} to {drop['high']:.0f} "
+        f"by what was measured; with the hose and all the rest it is {clean['suction']:.0f} Pa, "
+        f"which the source gives at {clean['flow'] * 3600:.0f} m3/h."
     )
-    assert (
-        "First prediction: first estimate (Lapple cut size, Shepherd-Lapple pressure drop)" in text
-    )
+
+
+def test_the_first_sentences_need_no_schooling(design: pipeline.Design) -> None:
+    spoken = " ".join(sentences(design))
+    schooled = "d50 median percentile Reynolds grade Lapple Barth Muschelknautz correlation heads"
+    assert [word for word in schooled.split() if word in spoken] == []
+    assert len(list(sentences(design))) == 3
+    assert all(len(sentence) < 200 for sentence in sentences(design))
+
+
+def test_a_target_flow_is_told_from_one_that_settles(design: pipeline.Design) -> None:
+    target = replace(design, forecast=replace(design.forecast, flow_is_target=True))
+    assert "which the source gives at" in list(sentences(design))[2]
+    assert "which a source has to give at" in list(sentences(target))[2]
+    assert "suction the source gives" in text_of(design)
+    assert "suction the source has to give" in text_of(target)
+
+
+def test_size_shows_every_model_its_verdict_and_the_band(design: pipeline.Design) -> None:
+    text = text_of(design)
+    rows = [" ".join(line.split()) for line in text.splitlines()]
+    (stage,) = design.stages
+    for said, factor in ((stage.forecast.cut_size, 1e6), (stage.forecast.pressure_drop, 1.0)):
+        for word in said.words:
+            assert word.value is not None
+            shown = f"{word.model} {figure(word.value * factor)}"
+            (row,) = (row for row in rows if shown in row)
+            assert row.startswith("* ") is word.trusted
+        band = " to ".join(figure(end * factor) for end in (said.low, said.high))
+        assert f", band {band}: " in " ".join(text.split())
+        assert said.basis in " ".join(text.split())
+    assert design.forecast.advice in " ".join(text.split())
+    assert design.forecast.advice.startswith("Weigh and measure after building")
+
+
+def test_size_shows_where_the_pressure_goes(design: pipeline.Design) -> None:
+    rows = [" ".join(line.split()) for line in text_of(design).splitlines()]
+    clean = design.forecast.clean
+    for share in clean.shares:
+        drop = float(share.pressure_drop)
+        assert f"{share.name} {figure(drop)} {figure(100 * drop / clean.suction, 2)}" in rows
 
 
 def test_size_shows_the_dimensions(design: pipeline.Design) -> None:
@@ -77,14 +124,16 @@ def test_size_shows_the_dimensions(design: pipeline.Design) -> None:
 
 
 def test_stages_are_told_apart_and_their_cost_adds_up(design: pipeline.Design) -> None:
-    one = design.stages[0].prediction.pressure_drop_shepherd_lapple
+    one = design.stages[0].forecast
     two = with_stages(design, 1, 4)
     size, catch, cost = sentences(two)
     assert "one cyclone, " in size
     assert ", then 4 equal cyclones side by side, " in size
-    assert "the first stage keeps" in catch
-    assert f" {figure(2 * one)} Pa " in cost
-    assert "Dimensions of stage 2;" in text_of(two)
+    cut = f"{figure(one.cut_size.central * 1e6)} um"
+    assert f"of grains of {cut}, then {cut} it keeps half" in catch
+    assert f" {figure(2 * one.pressure_drop.central)} Pa " in cost
+    for title in ("Dimensions of stage 2;", "Cut size of stage 2,", "Pressure drop of stage 2,"):
+        assert title in text_of(two)
 
 
 def test_the_gravest_finding_comes_first(design: pipeline.Design) -> None:
@@ -120,14 +169,14 @@ def test_build_ends_with_the_kit_its_pieces_and_the_cautions(run: Run, profile: 
     assert flat.index("Findings") < flat.index("Cautions")
 
 
-@pytest.mark.parametrize("table", ["families", "dusts", "polymers", "hoses", "fasteners"])
+@pytest.mark.parametrize("table", TABLES)
 def test_list_shows_every_row_and_every_source(run: Run, table: str) -> None:
     lines = run("list", table).stdout.splitlines()
     names = [re.split(r"  +", line.strip())[0] for line in lines]
     heading = next(line for line in lines if line.split() == ["name", "source"])
     column = heading.index("source")
     sources = " ".join(line[column:].strip() for line in lines[lines.index(heading) :])
-    for name, row in getattr(catalogue, table)().items():
+    for name, row in TABLES[table]().items():
         assert name in names
         assert " ".join(row.source.split()) in sources
     assert table in run("list", "--help").stdout

@@ -14,9 +14,9 @@ CASES = {
         "luthier-sander",
         ("[220 mm, 220 mm, 250 mm]", "[70 mm, 70 mm, 70 mm]"),
         """\
-gyrecut: shop.yaml:42:3: P090 printer.build_volume is too low for the ring with slot and portal, \
+gyrecut: shop.yaml:50:3: P090 printer.build_volume is too low for the ring with slot and portal, \
 which stays whole
-  42 |   build_volume: [70 mm, 70 mm, 70 mm]      # width, depth, height
+  50 |   build_volume: [70 mm, 70 mm, 70 mm]      # width, depth, height
      |   ^^^^^^^^^^^^
   given: 65 mm of height
   allowed: at least 98 mm
@@ -27,11 +27,11 @@ which stays whole
         "luthier-sander",
         ("[220 mm, 220 mm, 250 mm]", "[90 mm, 90 mm, 250 mm]"),
         """\
-gyrecut: shop.yaml:42:3: P090 printer.build_volume is too small for any sector of ring 1 of the body
-  42 |   build_volume: [90 mm, 90 mm, 250 mm]      # width, depth, height
+gyrecut: shop.yaml:50:3: P090 printer.build_volume is too small for any sector of ring 1 of the body
+  50 |   build_volume: [90 mm, 90 mm, 250 mm]      # width, depth, height
      |   ^^^^^^^^^^^^
   given: a bed that leaves 80 x 80 mm
-  allowed: room for a piece that reaches 121 mm from the axis, 77 degrees of it (slot and portal) \
+  allowed: room for a piece that reaches 121 mm from the axis, 79 degrees of it (slot and portal) \
 in one piece
   do: choose a smaller body, or a larger printer
 """,
@@ -40,8 +40,8 @@ in one piece
         "luthier-sander",
         ("nominal: 38 mm ", "nominal: 150 mm "),
         """\
-gyrecut: shop.yaml:14:5: P090 air.hose.nominal is too wide for the slot
-  14 |     nominal: 150 mm                            # as it is sold
+gyrecut: shop.yaml:15:5: P090 air.hose.nominal is too wide for the slot
+  15 |     nominal: 150 mm                            # as it is sold
      |     ^^^^^^^
   given: 16490 mm2 in the cuff, 2161 mm2 in the slot
   allowed: one at most 6 times the other
@@ -52,8 +52,8 @@ gyrecut: shop.yaml:14:5: P090 air.hose.nominal is too wide for the slot
         "casting-bench",
         ("intake_diameter: 1.2 in", "intake_diameter: 2.4 in"),
         """\
-gyrecut: shop.yaml:31:3: P090 outlet.intake_diameter is too wide for the vortex finder it sits in
-  31 |   intake_diameter: 2.4 in                     # its intake opening
+gyrecut: shop.yaml:41:3: P090 outlet.intake_diameter is too wide for the vortex finder it sits in
+  41 |   intake_diameter: 2.4 in                     # its intake opening
      |   ^^^^^^^^^^^^^^^
   given: 61.0 mm, with a finder of 52.5 mm
   allowed: at most 45.2 mm, so that its edge can be rounded
@@ -64,8 +64,8 @@ gyrecut: shop.yaml:31:3: P090 outlet.intake_diameter is too wide for the vortex 
         "luthier-sander",
         ("flow: 140 m3/h", "flow: 10 m3/h "),
         """\
-gyrecut: shop.yaml:24:1: P090 stages lead to a body of no useful size
-  24 | stages:                                       # one cyclone is enough here
+gyrecut: shop.yaml:32:1: P090 stages lead to a body of no useful size
+  32 | stages:                                       # one cyclone is enough here
      | ^^^^^^
   given: 39.3 mm across
   allowed: 40 mm to 900 mm
@@ -74,18 +74,29 @@ gyrecut: shop.yaml:24:1: P090 stages lead to a body of no useful size
     ),
     "formula asked beyond its range": (
         "luthier-sander",
+        ("inlet_velocity: 18 m/s", "body_diameter: 60 mm  "),
+        """\
+gyrecut: shop.yaml:32:1: P090 stages leads out of what published formulas cover, in the \
+inlet velocity
+""",
+    ),
+    "cut size no body has": (
+        "luthier-sander",
         ("inlet_velocity: 18 m/s", "cut_size: 40 um       "),
         """\
-gyrecut: shop.yaml:24:1: P090 stages lead out of what published formulas cover, in the \
-inlet velocity
+gyrecut: shop.yaml:32:1: P090 stages ask for a cut size that no body of these proportions has at \
+this flow
+  32 | stages:                                       # one cyclone is enough here
+     | ^^^^^^
+  given: cut_size: 40 um
 """,
     ),
     "fewer pieces than possible": (
         "luthier-sander",
         ("inlet_velocity: 18 m/s", "fit_pieces: 1         "),
         """\
-gyrecut: shop.yaml:24:1: P090 stages ask for a body in fewer pieces than this printer can make
-  24 | stages:                                       # one cyclone is enough here
+gyrecut: shop.yaml:32:1: P090 stages ask for a body in fewer pieces than this printer can make
+  32 | stages:                                       # one cyclone is enough here
      | ^^^^^^
   given: fit_pieces: 1
   allowed: as many as some body of 40 to 900 mm needs

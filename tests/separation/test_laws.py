@@ -13,7 +13,6 @@ from hypothesis import strategies as st
 from tests.correlations.shapes import cyclone
 from tests.separation.machines import AIR, HIGH_EFFICIENCY, changed, dust_like, kept_by, shipped
 
-from gyrecut.airflow.air import AirState
 from gyrecut.catalogue import families
 from gyrecut.correlations import consensus
 from gyrecut.correlations.consensus import central_cut_size, central_pressure_drop
@@ -29,6 +28,7 @@ from gyrecut.separation.uncertainty import Doubt, Spread, catch_spread
 if TYPE_CHECKING:
     from pathlib import Path
 
+    from gyrecut.airflow.air import AirState
     from gyrecut.correlations.geometry import CycloneGeometry
     from gyrecut.separation.chain import Grains
 
@@ -82,7 +82,7 @@ def spread_of(
 
 @given(family=FAMILY, diameter=DIAMETER, inlet=INLET, median=MEDIAN, density=DENSITY, factor=FACTOR)
 def test_catch_rises_with_particle_size_and_density(
-    family: str, diameter: float, inlet: float, median: float, density: float, factor: float
+    *, family: str, diameter: float, inlet: float, median: float, density: float, factor: float
 ) -> None:
     body, flow = body_with_flow(family, diameter, inlet)
 

@@ -137,15 +137,15 @@ def test_a_machine_worked_by_hand() -> None:
     # A straight source of 0.05 m3/s gives a fifth of its shut-off suction there: 8208.2 Pa.
     source = suction_curve_from_ends(shut_off=8208.2, open_flow=0.05, exponent=1.0, air_density=1.2)
     flow = settle(source, BY_HAND, air=PLAIN_AIR)
-    # the constants 0.8 and 2 lg 2.51 of two forms of the friction law differ by 2e-4 of f
-    assert flow == pytest.approx(0.04, rel=1e-4)
+    # The program's explicit friction formula is within 1 % of Prandtl's law: 3.9 Pa, and where
+    # source and system cross at 246 kPa s/m3, 1.6e-5 m3/s.
+    assert flow == pytest.approx(0.04, rel=4e-4)
     point = point_at(flow, BY_HAND, suction=float(source.suction(flow)), bore=0.05, air=PLAIN_AIR)
-    assert point.suction == pytest.approx(1641.63, rel=1e-3)
+    assert point.suction == pytest.approx(1641.63, rel=2.5e-3)
     assert point.hose_velocity == pytest.approx(20.372, rel=1e-3)
     by_hand = {"pick-up": 231.58, "hose": 389.65, "separator": 921.60, "outlet": 98.80}
-    assert {one.name: float(one.pressure_drop) for one in point.shares} == pytest.approx(
-        by_hand, rel=1e-3
-    )
+    for name, pressure in by_hand.items():
+        assert share(point, name) == pytest.approx(pressure, rel=1e-2 if name == "hose" else 1e-3)
     # static suction behind the pick-up: its loss and one head of the hose, 231.58 + 249.01
     assert point.tool_suction == pytest.approx(480.59, rel=1e-3)
     assert point.air_power == pytest.approx(0.04 * 480.59, rel=1e-3)
@@ -198,14 +198,25 @@ def test_suction_at_the_tool_counts_the_step_behind_a_narrow_nozzle(tmp_path: Pa
 
 
 @pytest.mark.parametrize(
-    "stages",
+    ("stages", "slots", "inlets"),
     [
-        STAGE,
-        f"proportions: {HIGH_EFFICIENCY}\n    body_diameter: 140 mm",
-        f"proportions: {HIGH_EFFICIENCY}\n    body_diameter: 150 mm\n  - {STAGE}\n    count: 3",
+        (STAGE, [], [18.0]),
+        (f"proportions: {HIGH_EFFICIENCY}\n    body_diameter: 140 mm", [0.1 * 0.14**2], []),
+        (
+            f"proportions: {HIGH_EFFICIENCY}\n    body_diameter: 100 mm\n    count: 2",
+            [2 * 0.1 * 0.1**2],
+            [],
+        ),
+        (
+            f"proportions: {HIGH_EFFICIENCY}\n    body_diameter: 150 mm\n  - {STAGE}\n    count: 3",
+            [0.1 * 0.15**2],
+            [18.0],
+        ),
     ],
 )
-def test_a_source_alone_sizes_at_the_flow_of_the_same_equation(tmp_path: Path, stages: str) -> None:
+def test_a_source_alone_sizes_at_the_flow_of_the_same_equation(
+    tmp_path: Path, stages: str, slots: list[float], inlets: list[float]
+) -> None:
     filtered = beside_hose("filter: {area: 0.5 m2, class: M}")
     profile = changed(tmp_path, FROM_SOURCE, filtered, (STAGE, stages))
     of = design(profile)
@@ -221,11 +232,8 @@ def test_a_source_alone_sizes_at_the_flow_of_the_same_equation(tmp_path: Path, s
         path = float(pick_up_of(profile, 0.0).pressure_drop(flow, air=air))
         path += float(hose.pressure_drop(flow, air=air))
         path += 1500.0 * flow / 0.5 * air.viscosity / 1.81e-5
-        if "body_diameter" in stages:
-            body = 0.140 if "140" in stages else 0.150
-            path += heads * air.density / 2 * (flow / (0.1 * body**2)) ** 2
-        if "inlet_velocity" in stages:
-            path += heads * air.density / 2 * 18.0**2
+        squares = [inlet**2 for inlet in inlets] + [(flow / slot) ** 2 for slot in slots]
+        path += heads * air.density / 2 * sum(squares)
         return float(source.suction(flow)) - path
 
     assert found == pytest.approx(brentq(spare, 0.0, source.open_flow, xtol=1e-14), rel=1e-9)
@@ -268,10 +276,8 @@ def test_a_filter_at_its_limit_and_a_choked_pick_up_take_flow(tmp_path: Path) ->
         assert point.hose_velocity == pytest.approx(
             of.clean.hose_velocity * point.flow / of.clean.flow, rel=1e-12
         )
-    # the load is that which takes 3 kPa at the clean flow; at the flow that is left it takes less
-    assert share(of.loaded, "filter") == pytest.approx(
-        3000 * of.loaded.flow / of.clean.flow, rel=6e-3
-    )
+    # the filter is let come to 3 kPa at the flow that is left
+    assert share(of.loaded, "filter") == pytest.approx(3000)
     # four fifths covered: a fifth of the opening, and a jet that is lost: 0.93 + 0.8^2 heads in it
     bore = 0.038
     jet = of.choked.flow / (0.2 * pi / 4 * bore**2)

@@ -89,7 +89,7 @@ def test_a_model_outside_its_range_says_so_and_the_others_go_on(
 
 
 def test_a_pressure_drop_outside_its_range_is_silent_too() -> None:
-    # Stairmand's own barrel ends above this finder's lip; the drop of the others stands
+    # more than a thousand heads by the square of slot area over finder area
     narrow = body(finder_diameter=0.2, slot_height=0.83, slot_width=0.48)
     agreement = pressure_drops(narrow, flow=float(flow_at(narrow, 15.0)), loading=0.0, air=AIR)
     found = word(agreement, "Casal and Martinez-Benet")
@@ -149,7 +149,8 @@ def test_more_dust_than_the_formulas_cover_is_told_at_its_line(tmp_path: Path) -
     assert told.exit_code == PROFILE_INVALID
     (problem,) = told.problems
     assert str(problem.code) == "P090"
-    assert problem.line == path.read_text(encoding="utf-8").splitlines().index("stages:") + 1
+    lines = path.read_text(encoding="utf-8").splitlines()
+    assert problem.line == lines.index("  feed: 200 kg/h") + 1
     assert "1.42857 kg/m^3" in str(told)
     assert "0 to 1 kg/m^3" in str(told)
 
@@ -169,7 +170,7 @@ def test_a_proportion_no_model_covers_is_told_at_its_line(tmp_path: Path) -> Non
 def test_where_one_answer_fades_into_the_other_all_carry_it() -> None:
     geometry = cyclone(HIGH_EFFICIENCY, 0.12)
     trusted, reynolds = {}, {}
-    for velocity in (9.0, 13.0, 20.0):
+    for velocity in (9.0, 12.0, 20.0):
         said = cut_sizes(
             geometry,
             flow=float(flow_at(geometry, velocity)),
@@ -182,7 +183,7 @@ def test_where_one_answer_fades_into_the_other_all_carry_it() -> None:
         trusted[velocity] = {one.model for one in said.words if one.trusted}
         values = [one.value for one in said.words if one.trusted and one.value is not None]
         assert min(values) * 0.999 <= said.central <= max(values) * 1.001
-    assert reynolds[9.0] < 20_000 < reynolds[13.0] < 25_000 < reynolds[20.0]
+    assert reynolds[9.0] < 20_000 < reynolds[12.0] < 25_000 < reynolds[20.0]
     assert trusted[9.0] == {"Muschelknautz, smooth"}
     assert trusted[20.0] == {"Muschelknautz, f >= 0.005", "Barth, f 0.005"}
-    assert trusted[13.0] == trusted[9.0] | trusted[20.0]
+    assert trusted[12.0] == trusted[9.0] | trusted[20.0]

@@ -38,8 +38,10 @@ FLOW = 0.04
 FINE = dust_like(median=5e-6)
 FINDER_HIGH = (
     f"proportions: {HIGH_EFFICIENCY}",
-    "proportions: {slot_height: 0.5, slot_width: 0.2, finder_diameter: 0.5, finder_length: 0.2, "
-    "barrel_height: 1.5, total_height: 4, dust_outlet_diameter: 0.375}",
+    (
+        "proportions: {slot_height: 0.5, slot_width: 0.2, finder_diameter: 0.5, "
+        "finder_length: 0.2, barrel_height: 1.5, total_height: 4, dust_outlet_diameter: 0.375}"
+    ),
 )
 COARSE_BEFORE_BANK = (
     STAGE,

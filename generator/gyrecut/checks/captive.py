@@ -29,10 +29,8 @@ if TYPE_CHECKING:
 
 COLUMNS = 112  # across the longer side of the piece
 FINEST_MM = 0.5  # half the thinnest resin wall: finer columns tell nothing more
-OFF_CENTRE = (
-    0.137,
-    0.219,
-)  # of a column: rays that miss the edges of a design drawn in round numbers
+OFF_CENTRE = (0.137, 0.219)  # of a column, so that rays miss edges drawn in round numbers
+WET_MM = 0.01  # less is rounding of 32 bits
 FAR_MM = 1e4  # above and below any printer
 LEAST_CUP_MM3 = 1000.0  # a millilitre; less drips off with the rest: common practice, no source
 LEAST_DEPTH_MM = 5.0  # a shallower one, such as a groove for a cord, drains by a tilt: same
@@ -64,7 +62,7 @@ class Cup:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class _Columns:
-    """Air in columns: `low`, `high (ranks, nx, ny)`, NaN where there is none; `xy (nx, ny, 2)`."""
+    """Air in columns: `low`, `high (ranks, nx, ny)`, NaN for none; `xy (nx, ny, 2)`."""
 
     low: NDArray[np.float64]
     high: NDArray[np.float64]
@@ -143,7 +141,7 @@ def _cups(columns: _Columns, *, upside_down: bool) -> list[Cup]:
     floor, roof = low.ravel(), high.ravel()
     level = np.maximum(floor, _water_levels(one, two, sill, floor.size))
     held = np.minimum(level, roof) - floor
-    is_wet = held > 0  # false for NaN, where there is no air
+    is_wet = held > WET_MM  # false for NaN, where there is no air
     joined = is_wet[one] & is_wet[two]
     graph = coo_array(
         (np.ones(int(joined.sum()), dtype=np.bool_), (one[joined], two[joined])),
@@ -157,7 +155,7 @@ def _cups(columns: _Columns, *, upside_down: bool) -> list[Cup]:
     for number in np.flatnonzero(volumes >= LEAST_CUP_MM3):
         members = wet[index == number]
         lowest = members[floor[members].argmin()]
-        depth = float(level[members].max() - floor[lowest])
+        depth = float(level[lowest] - floor[lowest])
         if depth < LEAST_DEPTH_MM:
             continue
         x, y = columns.xy.reshape(-1, 2)[lowest % (low[0].size)].tolist()

@@ -9,13 +9,14 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from gyrecut.checks.opposed import CHORD_MM
-from gyrecut.checks.surface import patches_of
+from gyrecut.checks.rays import NUDGE_MM
 from gyrecut.findings import Finding, Severity
 
 if TYPE_CHECKING:
     from numpy.typing import NDArray
 
     from gyrecut.checks.limits import PrintLimits
+    from gyrecut.checks.rays import RayCaster
     from gyrecut.checks.surface import Surface
 
 LEAST_CONTACT_MM2 = 1.0  # about one bead by two: less does not hold the first layer; practice
@@ -23,7 +24,9 @@ STRAIGHT = 1e-9  # rad; a gap of half a turn to this much is a straight edge of 
 LEAST_MARGIN = radians(5.0)  # a nozzle that catches tips less: common practice, no source
 MOST_SLENDER = 10.0  # height by foot; from there on a brim is advised: common practice, no source
 FACING = cos(radians(30.0))  # the two edges of a strip; more than this from parallel is a corner
-PLACES = 400  # looked at on the whole foot
+PLACES = 1000  # looked at along the outline of the foot, on top of one on each edge of it
+BEARINGS = 128  # looked along for the least width of a foot
+ABOVE = np.array([0.0, 0.0, 0.02])  # mm; a chamfer of the foot is wider there by no more than that
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -60,7 +63,7 @@ class Stance:
     slenderness: float
 
 
-def measure_stance(surface: Surface) -> Stance:
+def measure_stance(surface: Surface, caster: RayCaster) -> Stance:
     """Measure the foot, and where the centre of mass is over it.
 
     Notes
@@ -78,7 +81,7 @@ def measure_stance(surface: Surface) -> Stance:
         bearings = np.sort(np.arctan2(feet[:, 1], feet[:, 0]))
         gaps = np.diff(bearings, append=bearings[0] + 2 * pi)
         is_steady = bool(gaps.max() < pi - STRAIGHT)
-    strip, place = _narrowest_strip(surface, np.flatnonzero(flat))
+    strip, place = _narrowest_strip(surface, caster, flat)
     margin, slenderness = 0.0, inf
     footprint = _hull(surface.vertices[:, :2])
     if contact >= LEAST_CONTACT_MM2:
@@ -125,77 +128,45 @@ def _way_to_edge(outline: NDArray[np.float64]) -> float:
 
 def _least_width(outline: NDArray[np.float64]) -> float:
     """Give the width between two parallel lines; the least has one of them along a side [mm]."""
-    ways = _sides(outline) @ outline.T
+    sides = _sides(outline)
+    # Of the many sides of a round foot a few tell the same.
+    ways = sides[:: max(1, len(sides) // BEARINGS)] @ outline.T
     return float((ways.max(axis=1) - ways.min(axis=1)).min())
 
 
 def _narrowest_strip(
-    surface: Surface, triangles: NDArray[np.int64]
+    surface: Surface, caster: RayCaster, is_foot: NDArray[np.bool_]
 ) -> tuple[float, tuple[float, float, float]]:
-    """Measure the foot square to its nearest edge, from places spread over it.
+    """Shoot across the foot, just above the bed, from places along its outline.
 
     Notes
     -----
-    Two edges make a strip where they run side by side and face away from one another; at the
-    corners of a foot the line ends on another edge, and tells nothing.
+    Two edges make a strip where they run side by side and face away from one another; from the
+    corners of a foot the ray leaves through another edge, and tells nothing.
     """
-    nowhere = (0.0, 0.0, 0.0)
-    if len(triangles) == 0:
-        return inf, nowhere
-    is_foot = np.zeros(len(surface.faces), dtype=np.bool_)
-    is_foot[triangles] = True
-    _, patch = patches_of(surface.neighbours, is_foot)
+    triangles = np.flatnonzero(is_foot)
     row, side = np.nonzero(~is_foot[surface.neighbours[triangles]])
-    faces = surface.faces[triangles[row]]
-    rows = np.arange(len(row))
+    if len(row) == 0:
+        return inf, (0.0, 0.0, 0.0)
+    faces, rows = surface.faces[triangles[row]], np.arange(len(row))
+    start = surface.vertices[faces[rows, side]]
+    edge = surface.vertices[faces[rows, (side + 1) % 3]] - start
+    length = np.linalg.norm(edge[:, :2], axis=1)
+    counts = np.ceil(length / (length.sum() / PLACES)).astype(np.int64)
+    of = np.repeat(rows, counts)
+    share = (np.arange(len(of)) - np.repeat(np.cumsum(counts) - counts, counts) + 0.5) / counts[of]
     # Seen from above a triangle of the foot runs clockwise: its inside is on the right.
-    start = surface.vertices[faces[rows, side], :2]
-    edge = surface.vertices[faces[rows, (side + 1) % 3], :2] - start
-    length = np.linalg.norm(edge, axis=1)
-    inward = np.column_stack([edge[:, 1], -edge[:, 0]]) / length[:, None]
-    of_edge = patch[triangles[row]]
-
-    places, of_place = _spread(surface, triangles)
-    offset = start[None] - places[:, None]
-    share = np.clip(-np.einsum("pej,ej->pe", offset, edge) / length**2, 0, 1)
-    ways = offset + share[..., None] * edge
-    gap = np.linalg.norm(ways, axis=2)
-    gap[patch[of_place][:, None] != of_edge] = inf
-    nearest = gap.argmin(axis=1)
-    all_places = np.arange(len(places))
-    across = inward[nearest]
-    back = -np.einsum("pj,pj->p", offset[all_places, nearest], across)
-
-    # From the place along `across` to each edge that the line meets.
-    square = np.column_stack([-across[:, 1], across[:, 0]])
-    one = np.einsum("pj,pej->pe", square, offset)
-    two = np.einsum("pj,pej->pe", square, offset + edge)
-    meets = (one > 0) != (two > 0)
-    part = np.divide(one, one - two, out=np.zeros_like(one), where=meets)
-    ahead = np.einsum("pj,pej->pe", across, offset + part[..., None] * edge)
-    ahead = np.where(meets & (ahead > 0), ahead, inf)
-    first = ahead.argmin(axis=1)
-    faces_back = np.einsum("pj,pj->p", inward[first], across) < -FACING
-    width = np.where(faces_back & (back > 0), back + ahead[all_places, first], inf)
+    inward = np.column_stack([edge[:, 1], -edge[:, 0], np.zeros(len(edge))])[of]
+    inward /= length[of, None]
+    places = start[of] + share[:, None] * edge[of] + ABOVE
+    exits = caster.leave(places + NUDGE_MM * inward, inward)
+    is_across = exits.facing > FACING * np.linalg.norm(exits.normal[:, :2], axis=1)
+    width = np.where(is_across, exits.distance + NUDGE_MM, inf)
     least = int(width.argmin())
-    x, y = places[least].tolist()
+    if not np.isfinite(width[least]):
+        return inf, (0.0, 0.0, 0.0)
+    x, y, _ = (places[least] + width[least] / 2 * inward[least]).tolist()
     return float(width[least]), (x, y, 0.0)
-
-
-def _spread(
-    surface: Surface, triangles: NDArray[np.int64]
-) -> tuple[NDArray[np.float64], NDArray[np.int64]]:
-    """Choose places on the foot by its area, `(p, 2)`, and the triangle of each, `(p,)`."""
-    ends = np.cumsum(surface.areas[triangles])
-    marks = (np.arange(PLACES) + 0.5) / PLACES * ends[-1]
-    chosen = triangles[np.minimum(np.searchsorted(ends, marks), len(triangles) - 1)]
-    u, v = np.modf(np.arange(1, PLACES + 1)[:, None] * (0.7548776662466927, 0.5698402909980532))[
-        0
-    ].T
-    beyond = u + v > 1
-    u[beyond], v[beyond] = 1 - u[beyond], 1 - v[beyond]
-    first, second, third = surface.corners[chosen][:, :, :2].transpose(1, 0, 2)
-    return first + u[:, None] * (second - first) + v[:, None] * (third - first), chosen
 
 
 def stance_findings(stance: Stance, piece: str, limits: PrintLimits) -> tuple[Finding, ...]:

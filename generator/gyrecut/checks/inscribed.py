@@ -107,10 +107,12 @@ def thickness_map(mesh: trimesh.Trimesh) -> NDArray[np.float32]:
 
     Returns
     -------
-    (n,) float32
+    (m,) float32
         Diameter of the ball inscribed at the triangle's middle; NaN where it is caught in an edge
         [mm].
     """
     surface = surface_of(mesh)
     balls = inscribed_balls(RayCaster(surface), surface.corners.mean(axis=1), -surface.normals)
-    return np.where(balls.is_caught, np.nan, balls.diameter_mm).astype(np.float32)
+    of_mesh = np.full(len(surface.is_kept), np.nan, dtype=np.float32)
+    of_mesh[surface.is_kept] = np.where(balls.is_caught, np.nan, balls.diameter_mm)
+    return of_mesh

@@ -123,7 +123,7 @@ def measure_mesh(mesh: trimesh.Trimesh, limits: PrintLimits) -> PieceMeasures:
             thickness=measure_thickness(caster, walls, limits.smallest_wall_mm, area),
             features=measure_features(caster, walls, gaps, limits),
             overhang=measure_overhang(surface, limits.overhang_limit, limits.bridge_limit_mm),
-            stance=measure_stance(surface),
+            stance=measure_stance(surface, caster),
             cups=measure_cups(surface, caster) if limits.process == "resin" else (),
         ),
     )

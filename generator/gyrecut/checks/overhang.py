@@ -84,9 +84,9 @@ class Overhang:
         Area on ledges that are narrow enough to be let pass [mm2].
     starts_mm : tuple of (float, float, float)
         Lowest places of parts that begin in the air [mm].
-    classes : (n,) int8
-        `FacetClass` of each triangle. In a ceiling that is carried in part, each has the class of
-        the nearest sampled place.
+    classes : (m,) int8
+        `FacetClass` of each triangle of the mesh. In a ceiling that is carried in part, each has
+        the class of the nearest sampled place.
     """
 
     area_mm2: float
@@ -183,6 +183,8 @@ def measure_overhang(surface: Surface, overhang_limit: float, bridge_limit_mm: f
                     place_mm=(x, y, z),
                 )
             )
+    of_mesh = np.full(len(surface.is_kept), FacetClass.FINE, dtype=np.int8)
+    of_mesh[surface.is_kept] = classes
     return Overhang(
         area_mm2=area,
         worst_angle=worst,
@@ -190,7 +192,7 @@ def measure_overhang(surface: Surface, overhang_limit: float, bridge_limit_mm: f
         bridges=tuple(bridges),
         ledge_mm2=ledges,
         starts_mm=tuple((x, y, z) for x, y, z in lows_of(surface).starts.tolist()),
-        classes=classes,
+        classes=of_mesh,
     )
 
 

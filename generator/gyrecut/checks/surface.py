@@ -34,6 +34,8 @@ class Surface:
         Area of each triangle [mm2].
     neighbours : (n, 3) int
         Triangle across the edge from corner k to corner k + 1; -1 where the mesh is not closed.
+    is_kept : (m,) bool
+        Which triangles of the mesh are among them; one that merging shrank to an edge is not.
     loose_edges, crowded_edges : int
         Edges with one triangle only, and with three or more.
     turned_edges : int
@@ -46,6 +48,7 @@ class Surface:
     normals: NDArray[np.float64]
     areas: NDArray[np.float64]
     neighbours: NDArray[np.int64]
+    is_kept: NDArray[np.bool_]
     loose_edges: int
     crowded_edges: int
     turned_edges: int
@@ -100,7 +103,8 @@ def surface_of(mesh: trimesh.Trimesh) -> Surface:
     """
     faces = np.asarray(mesh.faces, dtype=np.int64)
     # A triangle that merging shrank to an edge has no face; without it the others still close.
-    faces = faces[(faces != np.roll(faces, 1, axis=1)).all(axis=1)]
+    is_kept = (faces != np.roll(faces, 1, axis=1)).all(axis=1)
+    faces = faces[is_kept]
     vertices = np.asarray(mesh.vertices, dtype=np.float64)
     corners = vertices[faces]
     sides = np.roll(corners, -1, axis=1) - corners
@@ -122,6 +126,7 @@ def surface_of(mesh: trimesh.Trimesh) -> Surface:
         normals=normals,
         areas=lengths / 2,
         neighbours=neighbours,
+        is_kept=is_kept,
         loose_edges=loose,
         crowded_edges=crowded,
         turned_edges=turned,

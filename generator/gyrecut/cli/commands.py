@@ -103,12 +103,12 @@ def size(
     """Say its size, its catch and its cost; nothing is built."""
     from gyrecut.cli.designing import designed
     from gyrecut.cli.findings import exit_code_of
-    from gyrecut.cli.size_report import show_design
+    from gyrecut.cli.size_report import show_design, size_document
     from gyrecut.profile import load_profile
 
     design = designed(profile, load_profile(profile))
     code = exit_code_of(design.findings)
-    result, show = design.as_document(), partial(show_design, design)
+    result, show = size_document(design), partial(show_design, design)
     if explain:
         from gyrecut.cli.explain import explained, explanations, with_explanations
 

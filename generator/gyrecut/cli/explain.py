@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING, Any
 from gyrecut.cli.explain_air import air_explanations
 from gyrecut.cli.explain_catch import catch_explanations, grade_explanations
 from gyrecut.cli.explain_cut_size import cut_size_explanations
-from gyrecut.cli.explain_pressure import pressure_explanations
+from gyrecut.cli.explain_pressure import pressure_explanations, safe_suction_explanation
 from gyrecut.cli.explain_terms import written
 from gyrecut.kit.manifest import plain
 
@@ -30,7 +30,7 @@ def explanations(design: Design) -> tuple[Explanation, ...]:
         lines += cut_size_explanations(design, stage)
         lines += grade_explanations(design, stage)
         lines += pressure_explanations(design, stage)
-    return (*lines, *catch_explanations(design))
+    return (*lines, safe_suction_explanation(design), *catch_explanations(design))
 
 
 def explained(document: Mapping[str, Any], lines: tuple[Explanation, ...]) -> dict[str, Any]:
@@ -57,7 +57,8 @@ def _print_one(out: Console, line: Explanation) -> None:
     margin = " " * len(line.result.symbol)
     if len(line.numbers_put_in) <= NUMBERS_IN_A_LINE:
         out.print(f"  {margin} = {line.numbers_put_in}", soft_wrap=True)
-    out.print(f"  {margin} = {written(line.result.value)} {line.result.unit}", soft_wrap=True)
+    result = f"{written(line.result.value)} {line.result.unit}".rstrip()
+    out.print(f"  {margin} = {result}", soft_wrap=True)
     widest = max(len(term.symbol) for term in line.terms)
     for term in line.terms:
         amount = f"{written(term.value)} {term.unit}".strip()

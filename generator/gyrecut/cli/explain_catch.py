@@ -8,11 +8,12 @@ import numpy as np
 
 from gyrecut.cli.explain_cut_size import of_stage
 from gyrecut.cli.explain_terms import Explanation, Term, source_of, term
-from gyrecut.correlations.consensus import SLOPE
+from gyrecut.correlations.consensus import SLOPE, SLOPE_HIGH, SLOPE_LOW, central_cut_size
 from gyrecut.correlations.grade import grade_efficiency_with_slope
 from gyrecut.separation.chain import LEAK_THAT_SPOILS_ALL, through
 from gyrecut.separation.forecast import BIN_FILL, CLASSES
 from gyrecut.separation.sizes import sizes_of
+from gyrecut.separation.uncertainty import Doubt
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
@@ -25,17 +26,18 @@ if TYPE_CHECKING:
 def grade_explanations(design: Design, stage: StageDesign) -> Iterator[Explanation]:
     """Explain what one stage keeps: one point of its grade curve, and the sum over all sizes."""
     of, dust = of_stage(design, stage), design.dust
+    passing = design.forecast.catch.passing_median
     central = term("d_50", "cut size", stage.forecast.cut_size.central, "m")
     slope = term("m", "slope of the grade curve", SLOPE)
     yield Explanation(
-        what=f"Grade curve{of} at the dust's median",
+        what=f"Grade curve{of}, at the median of what passes in the end",
         formula="1 / (1 + (d_50 / d)^m)",
-        terms=(central, term("d", "median grain", dust.median, "m"), slope),
+        terms=(central, term("d", "median of what passes", passing, "m"), slope),
         result=term(
             "eta",
             "share of these grains kept",
             grade_efficiency_with_slope(
-                dust.median, cut_size=stage.forecast.cut_size.central, slope=SLOPE
+                passing, cut_size=stage.forecast.cut_size.central, slope=SLOPE
             ),
         ),
         source=source_of(grade_efficiency_with_slope),
@@ -77,6 +79,7 @@ def catch_explanations(design: Design) -> Iterator[Explanation]:
             result=kept,
             source=source_of(through),
         )
+    yield _spread(design)
     feed = design.profile.dust.feed
     if feed is None or catch.bin_fill_time is None:
         return
@@ -92,6 +95,38 @@ def catch_explanations(design: Design) -> Iterator[Explanation]:
         ),
         result=term("t", "time", catch.bin_fill_time, "s"),
         source=f"Mass balance. Dust: {design.dust.source}",
+    )
+
+
+def _spread(design: Design) -> Explanation:
+    spread, doubt = design.forecast.catch.spread, Doubt()
+    cut_sizes = [stage.forecast.cut_size for stage in design.stages]
+    return Explanation(
+        what="90 % range of the share kept",
+        formula=(
+            "5th and 95th percentile of K over n draws, in each of which every input is multiplied "
+            "by a random factor (log-normal), 9 of 10 of them between 1 / k and k"
+        ),
+        terms=(
+            term("n", "draws", spread.draws),
+            term("seed", "the same seed draws the same", spread.seed),
+            term(
+                "k_d",
+                "cut size: the band of the measured cyclones, one factor for all stages",
+                max(cut.high / cut.central for cut in cut_sizes),
+            ),
+            term("k_m", "median of the dust", doubt.median),
+            term("k_s", "spread of the dust", doubt.spread),
+            term("k_rho", "density of a grain", doubt.density),
+            term("k_Q", "air flow", doubt.flow),
+            term("k_f", "wall friction", doubt.friction),
+            term("m_low", "flattest grade curve drawn", SLOPE_LOW),
+            term("m_high", "steepest grade curve drawn", SLOPE_HIGH),
+        ),
+        result=Term(
+            symbol="K_90", what="low and high end of the range", value=(spread.low, spread.high)
+        ),
+        source=f"{source_of(central_cut_size)} Factors of the inputs: common practice, no source.",
     )
 
 

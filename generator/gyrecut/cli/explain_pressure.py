@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING
 from gyrecut.cli.explain_cut_size import arriving_loading, of_stage
 from gyrecut.cli.explain_terms import Explanation, Term, source_of, term
 from gyrecut.correlations.casal_martinez import inlet_velocity_heads_casal_martinez
-from gyrecut.correlations.consensus import PRESSURE_BAND, central_heads, central_pressure_drop
+from gyrecut.correlations.consensus import PRESSURE_BAND, central_heads
 from gyrecut.correlations.dirgo_ramachandran import inlet_velocity_heads_dirgo_ramachandran
 from gyrecut.correlations.heads import pressure_drop_from_heads
 from gyrecut.correlations.loading import BRIGGS, pressure_drop_factor_briggs
@@ -21,6 +21,8 @@ if TYPE_CHECKING:
 
     from gyrecut.pipeline import Design, StageDesign
     from gyrecut.separation.models import Agreement
+
+SAFE = "Shepherd and Lapple"
 
 
 def pressure_explanations(design: Design, stage: StageDesign) -> Iterator[Explanation]:
@@ -57,7 +59,7 @@ def pressure_explanations(design: Design, stage: StageDesign) -> Iterator[Explan
             inlet_velocity_heads_dirgo_ramachandran,
         ),
         (
-            "Shepherd and Lapple",
+            SAFE,
             "N_S",
             f"{TANGENTIAL_INLET:.0f} * a * b / D_e^2",
             slot,
@@ -98,7 +100,7 @@ def pressure_explanations(design: Design, stage: StageDesign) -> Iterator[Explan
         formula="k * (N_C + N_D) / 2 * rho * v_i^2 / 2",
         terms=(relief, heads["N_C"], heads["N_D"], density, velocity),
         result=central,
-        source=source_of(central_heads, central_pressure_drop),
+        source=source_of(central_heads, pressure_drop_factor_briggs),
     )
     band = term("w", "band that the measured cyclones ask for", PRESSURE_BAND)
     for what, sign, value in (("low", "-", said.low), ("high", "+", said.high)):
@@ -109,6 +111,29 @@ def pressure_explanations(design: Design, stage: StageDesign) -> Iterator[Explan
             result=term(f"dp_{what}", f"{what} end of the band", value, "Pa"),
             source=source_of(central_heads),
         )
+
+
+def safe_suction_explanation(design: Design) -> Explanation:
+    """Explain the suction to choose a source by: the safe model in place of the trusted ones."""
+    shares = {share.name: float(share.pressure_drop) for share in design.forecast.clean.shares}
+    formula = "p"
+    terms = [term("p", "suction at the operating point", design.forecast.clean.suction, "Pa")]
+    for stage in design.stages:
+        number = f"_{stage.number}" if len(design.stages) > 1 else ""
+        name = f"separator {stage.number}" if number else "separator"
+        formula += f" + dp_S{number} - dp{number}"
+        safe = _word(stage.forecast.pressure_drop, SAFE)
+        terms += [
+            term(f"dp_S{number}", f"{name}, {SAFE}", safe, "Pa"),
+            term(f"dp{number}", f"{name}, central, clean air", shares[name], "Pa"),
+        ]
+    return Explanation(
+        what="Suction to choose a source by",
+        formula=formula,
+        terms=tuple(terms),
+        result=term("p_safe", "suction", design.forecast.safe_suction, "Pa"),
+        source=source_of(inlet_velocity_heads_shepherd_lapple),
+    )
 
 
 def _word(said: Agreement, model: str) -> float:

@@ -19,7 +19,7 @@ if TYPE_CHECKING:
 _NAME = re.compile(r"[A-Za-z_]\w*")
 _REFERENCES = re.compile(r"^References\n-+\n(.*?)(?=\n\n\w|\Z)", re.MULTILINE | re.DOTALL)
 _FOOTNOTE = re.compile(r"\.\. \[\d+\] ")
-_ROLE = re.compile(r":\w+:`([^`]*)`")
+_CODE = re.compile(r"(?::\w+:)?`([^`]*)`")
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -104,4 +104,4 @@ def _references(function: Callable[..., object]) -> str:
     if found is None:
         raise ValueError(f"the docstring of {function.__qualname__} names no source")
     text = _FOOTNOTE.sub("", " ".join(found[1].split()))
-    return _ROLE.sub(lambda role: role[1].rpartition(".")[2].replace("_", " "), text)
+    return _CODE.sub(lambda name: name[1].rpartition(".")[2].replace("_", " "), text)

@@ -220,6 +220,15 @@ VIEWS = {
         ),
         cells=_filter,
     ),
+    "fasteners": _View(
+        rows=catalogue.fasteners,
+        note="All in mm: the screw's clearance hole (medium), head, nut, and heat-set insert.",
+        columns=(
+            "name", "#hole", "#head", "#head height", "#nut", "#nut height", "#insert hole",
+            "#insert length", "#boss",
+        ),
+        cells=_fastener,
+    ),
     "measured": _View(
         rows=catalogue.measured_points,
         note="Measured cyclones that the models are held against: body in mm, flow in m3/h, cut "
@@ -232,14 +241,5 @@ VIEWS = {
             "#heads",
         ),
         cells=_measured,
-    ),
-    "fasteners": _View(
-        rows=catalogue.fasteners,
-        note="All in mm: the screw's clearance hole (medium), head, nut, and heat-set insert.",
-        columns=(
-            "name", "#hole", "#head", "#head height", "#nut", "#nut height", "#insert hole",
-            "#insert length", "#boss",
-        ),
-        cells=_fastener,
     ),
 }  # fmt: skip

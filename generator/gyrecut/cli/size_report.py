@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, Any
 
 from gyrecut.cli.cautions import cautions_for
 from gyrecut.cli.dimension_rows import dimension_rows
@@ -10,6 +10,7 @@ from gyrecut.cli.figures import cubic_metres_an_hour, figure, micrometres, perce
 from gyrecut.cli.findings import print_findings
 from gyrecut.cli.tables import print_table
 from gyrecut.kit.facts import estimate_facts
+from gyrecut.kit.manifest import plain
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
@@ -23,6 +24,19 @@ if TYPE_CHECKING:
     from gyrecut.separation.forecast import Forecast
     from gyrecut.separation.models import Agreement
     from gyrecut.separation.operating_point import OperatingPoint
+
+
+def size_document(design: Design) -> dict[str, Any]:
+    """Give a design as a JSON document holds it: all it is made of, and what is shown of it."""
+    return {
+        **design.as_document(),
+        "expect": plain(tuple(estimate_facts(design.forecast))),
+        "lengths": [
+            {"stage": stage.number, "part": part, "what": what, "mm": length}
+            for stage in design.stages
+            for part, what, length in dimension_rows(stage.dimensions)
+        ],
+    }
 
 
 def show_design(design: Design, stream: TextIO) -> None:
@@ -82,17 +96,17 @@ def sentences(design: Design) -> Iterator[str]:
         f"{micrometres(stage.forecast.cut_size.central)} um" for stage in design.stages
     )
     yield (
-        f"It should keep {percent(catch.kept)} % of this dust by mass (90 % range "
-        f"{percent(catch.spread.low)} to {percent(catch.spread.high)}), and half of the grains of "
-        f"{cuts}."
+        f"It should keep {percent(catch.kept)} % of this dust by mass, in 9 of 10 cases "
+        f"{percent(catch.spread.low)} to {percent(catch.spread.high)} %; of grains of {cuts} it "
+        "keeps half, of larger ones more."
     )
     drops = [stage.forecast.pressure_drop for stage in design.stages]
     low, central, high = (sum(getattr(drop, end) for drop in drops) for end in _ENDS)
-    flow = cubic_metres_an_hour(expected.flow)
-    gives = "has to give" if expected.flow_is_target else "gives"
+    gives = "a source has to give" if expected.flow_is_target else "the source gives"
     yield (
-        f"It takes {figure(central)} Pa ({figure(low)} to {figure(high)}) of the "
-        f"{figure(expected.clean.suction)} Pa that the source {gives} at {flow} m3/h."
+        f"It takes {figure(central)} Pa of suction, {figure(low)} to {figure(high)} by what was "
+        f"measured; with the hose and all the rest it is {figure(expected.clean.suction)} Pa, "
+        f"which {gives} at {cubic_metres_an_hour(expected.flow)} m3/h."
     )
 
 

@@ -40,6 +40,13 @@ FINDER_BELOW_SLOT = Range(
     unit="-",
     source="the entry volume begins at half the slot height",
 )
+VORTEX_VOLUME = Range(
+    quantity="volume around the core, over the body diameter cubed",
+    low=1e-3,
+    high=100.0,
+    unit="-",
+    source="below, the core would be wider than the cone it ends in",
+)
 VORTEX_EXPONENT = Range(
     quantity="vortex exponent", low=0.0, high=1.0, unit="-", source="rigid body to free vortex"
 )
@@ -190,6 +197,7 @@ def leith_licht(
             - finder**2 * length
         )
     )
+    VORTEX_VOLUME.check(vortex_volume / body**3)
     slot_area = geometry.slot_height * geometry.slot_width
     number = 8.0 * (entry_volume + vortex_volume / 2.0) / (body * slot_area)
     half_caught = (log(2.0) / 2.0) ** (2.0 * exponent + 2.0) / number

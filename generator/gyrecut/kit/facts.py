@@ -12,6 +12,8 @@ if TYPE_CHECKING:
     from gyrecut.proportions.dimensions import Dimensions
     from gyrecut.separation.forecast import Forecast
 
+ALMOST_ALL = 0.99995  # from here four digits would say 100 %
+
 
 def body_facts(d: Dimensions, of: str) -> Iterator[Fact]:
     """Give the main dimensions of one separator; `of` names its stage where there are several."""
@@ -42,7 +44,7 @@ def estimate_facts(expected: Forecast) -> Iterator[Fact]:
         label="share of the dust's mass kept",
         value=catch.kept * 100,
         unit="%",
-        note=f"90 % range {catch.spread.low * 100:.4g} to {catch.spread.high * 100:.4g} %",
+        note=f"90 % range {_percent(catch.spread.low)} to {_percent(catch.spread.high)} %",
     )
     for number, stage in enumerate(expected.stages, start=1):
         of = f", stage {number}" if several else ""
@@ -60,7 +62,8 @@ def estimate_facts(expected: Forecast) -> Iterator[Fact]:
             unit="Pa",
             note=f"{drop.low:.0f} to {drop.high:.0f} Pa",
         )
-    yield Fact(label="suction the source has to give", value=expected.clean.suction, unit="Pa")
+    gives = "has to give" if expected.flow_is_target else "gives"
+    yield Fact(label=f"suction the source {gives}", value=expected.clean.suction, unit="Pa")
     yield Fact(
         label="suction to choose a source by",
         value=expected.safe_suction,
@@ -85,3 +88,8 @@ def estimate_facts(expected: Forecast) -> Iterator[Fact]:
             unit="h",
             note="weak: a factor of 3 either way",
         )
+
+
+def _percent(share: float) -> str:
+    """Write a share so that it never rounds up to all of it."""
+    return "over 99.99" if ALMOST_ALL <= share < 1 else f"{share * 100:.4g}"

@@ -64,15 +64,15 @@ def at_its_line(path: Path, wrong: UnbuildableError | OutOfRangeError) -> Profil
         key, what = wrong.key, wrong.what
         given, allowed, fix = wrong.given, wrong.allowed, wrong.fix
     else:
-        key, what = (
-            ("stages",),
-            f"lead out of what published formulas cover, in the {wrong.quantity}",
-        )
+        # the one quantity here that the stages do not decide
+        is_feed = wrong.quantity.startswith("dust in the air")
+        key = ("dust", "feed") if is_feed else ("stages",)
+        what = f"leads out of what published formulas cover, in the {wrong.quantity}"
         given = f"{wrong.value:g} {wrong.unit}".replace(" -", "")
         allowed = f"{wrong.low:g} to {wrong.high:g} {wrong.unit} ({wrong.source})".replace(
             " - ", " "
         )
-        fix = "change the proportions, the size or the flow"
+        fix = "change this line, the proportions, the size or the flow"
     branch = tree
     for part in key:
         below = branch.below(part)

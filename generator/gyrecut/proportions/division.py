@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 from itertools import pairwise
-from math import atan2, ceil, cos, degrees, hypot, inf, pi, sin, tan
+from math import asin, atan2, ceil, cos, degrees, hypot, inf, pi, sin, tan
 from typing import TYPE_CHECKING
 
 import numpy as np
@@ -24,10 +24,11 @@ MOST_SECTORS = 12
 ARC_STEPS = 24
 TURNS = np.deg2rad(np.arange(0.0, 180.0, 1.0))
 SPARE_MM = 0.5
+PLANNED_FILL = 0.996  # arcs are planned as chords, which fall a little short of them
 KEEL_LAND_MM = 2.0  # width the cut keel stands on
 MORE_RINGS = 6  # than the printer's height asks for, so that each stands steady
 STEADY_FOOT = 0.12  # radius of a ring's foot over its height; common practice, no source
-STEADY_LEAN = 0.97
+STEADY_LEAN = 0.93
 
 
 def best_turn(outline_mm: NDArray[np.float64], bed: Bed) -> tuple[float, bool]:
@@ -51,7 +52,7 @@ def best_turn(outline_mm: NDArray[np.float64], bed: Bed) -> tuple[float, bool]:
         np.ptp(turned_x, axis=1) / bed.width_mm, np.ptp(turned_y, axis=1) / bed.depth_mm
     )
     best = int(np.argmin(fill))
-    return float(TURNS[best]), bool(fill[best] <= 1.0)
+    return float(TURNS[best]), bool(fill[best] <= PLANNED_FILL)
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -121,12 +122,11 @@ def _first_cut(plan: _Plan, count: int, stagger: float) -> float | None:
 
 
 def slot_arc(body: Body, portal: Portal) -> tuple[float, float]:
-    """Angles [rad] between which slot and portal stand out of the barrel."""
-    low_y = portal.frame_low_y_mm
-    return (
-        atan2(portal.frame_high_y_mm, 0.0) - portal.screws.boss_mm / 2 / body.radius_mm,
-        atan2(low_y, portal.face_x_mm) % (2 * pi),
-    )
+    """Angles [rad] between which slot, portal and keel stand out of the barrel."""
+    low_y, spare = portal.frame_low_y_mm, portal.screws.boss_mm / 2 / body.radius_mm
+    at_face = atan2(low_y, portal.face_x_mm) % (2 * pi)
+    at_barrel = pi - asin(max(-1.0, min(1.0, low_y / body.outer_radius_mm)))
+    return pi / 2 - spare, max(at_face, at_barrel) + body.wall_mm / body.radius_mm
 
 
 def _top_plan(body: Body, portal: Portal, rim: Rim, joint: Joint) -> _Plan:

@@ -88,10 +88,29 @@ class Unsized:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Condition:
-    """In what state the way is: share of the pick-up choked, dust on the filter [kg/m^2]."""
+    """In what state the way is.
+
+    Parameters
+    ----------
+    choked : float
+        Share of the pick-up that is covered [-]
+    filter_loss : float or None
+        Pressure the loaded filter has come to, whatever the flow [Pa]; None when it is clean.
+    """
 
     choked: float = 0.0
-    cake_load: float = 0.0
+    filter_loss: float | None = None
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class FixedLoss:
+    """A part that takes the same pressure at every flow [Pa]: a filter let come to its limit."""
+
+    loss: float
+
+    def pressure_drop(self, flow: Numbers, *, air: AirState) -> Numbers:  # noqa: ARG002 - an `Element`
+        """Pressure it takes [Pa]."""
+        return np.full(np.shape(flow), self.loss)[()]
 
 
 CLEAN = Condition()
@@ -156,8 +175,8 @@ def pick_up_of(profile: Profile, choked: float) -> PickUp:
     )
 
 
-def filter_of(profile: Profile, dust: Dust, cake_load: float) -> Filter | None:
-    """Give the filter with so much dust on it, None where the profile names none."""
+def clean_filter(profile: Profile, dust: Dust) -> Filter | None:
+    """Give the clean filter, None where the profile names none."""
     cloth = profile.air.filter
     if cloth is None:
         return None
@@ -168,7 +187,7 @@ def filter_of(profile: Profile, dust: Dust, cake_load: float) -> Filter | None:
         area=cloth.area,
         clean_resistance=resistance,
         cake_resistance=dust.cake_resistance,
-        cake_load=cake_load,
+        cake_load=0.0,
     )
 
 
@@ -269,8 +288,12 @@ def hose_of(profile: Profile) -> Hose:
 def _filter_part(
     profile: Profile, dust: Dust, condition: Condition
 ) -> tuple[tuple[str, Element], ...]:
-    cloth = filter_of(profile, dust, condition.cake_load)
-    return () if cloth is None else (("filter", cloth),)
+    cloth = clean_filter(profile, dust)
+    if cloth is None:
+        return ()
+    if condition.filter_loss is not None:
+        return (("filter", FixedLoss(loss=condition.filter_loss)),)
+    return (("filter", cloth),)
 
 
 def _outlet(d: Dimensions, *, share: float) -> list[tuple[str, Element]]:

@@ -7,8 +7,6 @@ from typing import TYPE_CHECKING
 
 import numpy as np
 
-from gyrecut.airflow.filters import DUST_RATE, filter_life, filter_load_at_limit
-from gyrecut.catalogue import filters
 from gyrecut.correlations.consensus import SLOPE
 from gyrecut.correlations.geometry import mean_inlet_velocity
 from gyrecut.correlations.loading import penetration_factor
@@ -20,12 +18,12 @@ from gyrecut.separation.air_path import (
     CLEAN,
     Condition,
     cyclones,
-    filter_of,
     hose_bore,
     suction_source,
     system_of,
 )
 from gyrecut.separation.chain import Grains, Step, median_of, through
+from gyrecut.separation.filter_outlook import FilterOutlook, filter_outlook
 from gyrecut.separation.models import Agreement, cut_sizes, pressure_drops, safe_pressure_drop
 from gyrecut.separation.operating_point import OperatingPoint, bisected, point_at, settle
 from gyrecut.separation.uncertainty import Doubt, Spread, catch_spread
@@ -42,7 +40,6 @@ CLASSES = 101  # size classes; the catch is right to 1e-5 with them
 CHOKED = 0.8  # share of the pick-up that a board or a sheet covers in the choked case
 BIN_FILL = 0.8  # share of its volume a bin is used to: common practice, no source
 REFERENCE_CONTENT = 2.3e-3  # kg/m3, one grain in a cubic foot: US course material, from memory
-MILLIGRAM = 1e-6
 
 WEIGH = (
     "Weigh and measure after building: these models lie a factor apart from each other and from "
@@ -116,32 +113,6 @@ class Catch:
     loading_factor: float | None
     to_filter: float | None
     bin_fill_time: float | None
-
-
-@dataclass(frozen=True, slots=True, kw_only=True)
-class FilterOutlook:
-    """What the filter gets and lets through.
-
-    Parameters
-    ----------
-    filter_class : str
-        Row of the catalogue.
-    face_velocity : float
-        Flow over cloth area [m/s]
-    life : float or None
-        Working time until its limit [s]; None without a limit or a feed, or where hardly any dust
-        arrives.
-    after_filter : float or None
-        Dust behind it, by the class's penetration [mg/m^3]; None where the class gives none.
-    exposure_limit : float or None
-        Of the dust in the breathing zone [mg/m^3]
-    """
-
-    filter_class: str
-    face_velocity: float
-    life: float | None
-    after_filter: float | None
-    exposure_limit: float | None
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -273,11 +244,11 @@ def forecast(
             else BIN_FILL * profile.bin.volume * dust.bulk_density / (feed * kept)
         ),
     )
-    outlook, load_at_limit = _filter(profile, dust, catch, flow=clean.flow)
-    loaded = None
-    if load_at_limit is not None and load_at_limit > 0:
-        condition = Condition(cake_load=load_at_limit)
-        loaded = _point(profile, dust, stages, condition, source=source, target=flow, air=air)
+    loaded, cloth = None, profile.air.filter
+    clean_loss = sum(float(s.pressure_drop) for s in clean.shares if s.name == "filter")
+    if cloth is not None and cloth.limit is not None and cloth.limit > clean_loss:
+        at_limit = Condition(filter_loss=cloth.limit)
+        loaded = _point(profile, dust, stages, at_limit, source=source, target=flow, air=air)
     return Forecast(
         flow=clean.flow,
         flow_is_target=source is None,
@@ -293,7 +264,13 @@ def forecast(
             - float(cyclones(step).pressure_drop(clean.flow, air=air))
             for step in steps
         ),
-        filter=outlook,
+        filter=filter_outlook(
+            profile,
+            dust,
+            to_filter=catch.to_filter,
+            clean_flow=clean.flow,
+            loaded_flow=None if loaded is None else loaded.flow,
+        ),
     )
 
 
@@ -407,39 +384,3 @@ def _loading_factor(content: float) -> float | None:
     if content < lowest:
         return None
     return float(penetration_factor(dust_content=content, reference_content=REFERENCE_CONTENT))
-
-
-def _filter(
-    profile: Profile, dust: Dust, catch: Catch, *, flow: float
-) -> tuple[FilterOutlook | None, float | None]:
-    """Give the filter's outlook, and the dust on it at its limit [kg/m2]."""
-    cloth, named = filter_of(profile, dust, 0.0), profile.air.filter
-    if cloth is None or named is None:
-        return None, None
-    row = filters()[named.filter_class]
-    face = flow / cloth.area
-    load = None
-    if named.limit is not None:
-        load = float(
-            filter_load_at_limit(
-                limit=named.limit,
-                face_velocity=face,
-                clean_resistance=cloth.clean_resistance,
-                cake_resistance=cloth.cake_resistance,
-            )
-        )
-    life = None
-    arriving = catch.to_filter
-    if load is not None and load > 0 and arriving is not None and arriving >= DUST_RATE.low:
-        life = float(filter_life(cake_load=load, area=cloth.area, dust_rate=arriving))
-    after = None
-    if row.penetration is not None and arriving is not None:
-        after = row.penetration * arriving / flow / MILLIGRAM
-    outlook = FilterOutlook(
-        filter_class=row.name,
-        face_velocity=face,
-        life=life,
-        after_filter=after,
-        exposure_limit=dust.exposure_limit,
-    )
-    return outlook, load
