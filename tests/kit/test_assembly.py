@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from pathlib import Path
+from typing import TYPE_CHECKING
 
 import pytest
 
@@ -10,7 +11,9 @@ from gyrecut import pipeline
 from gyrecut.catalogue import fasteners
 from gyrecut.kit.assembly import SCREW_LENGTHS_MM, hardware, steps
 from gyrecut.profile import load_profile
-from gyrecut.proportions.dimensions import Dimensions
+
+if TYPE_CHECKING:
+    from gyrecut.proportions.dimensions import Dimensions
 
 PROFILES = Path(__file__).parents[2] / "profiles"
 SHIPPED = ("luthier-sander", "joinery-planer", "casting-bench")

@@ -58,12 +58,12 @@ def test_gravest_finding_comes_first(contents: KitContents) -> None:
     assert section.index("too-tall") < section.index("thin-wall")
 
 
-def test_estimate_is_called_one_and_names_its_models(contents: KitContents) -> None:
+def test_estimate_is_called_one_and_says_what_to_do_with_it(contents: KitContents) -> None:
     text = summary_text(contents)
-    section = text[text.index("## First estimate") : text.index("## Pieces")]
+    section = text[text.index("## What to expect") : text.index("## Pieces")]
     assert "| cut size | 3.2 um | Lapple |" in section
-    assert "A first estimate only" in section
-    assert "Shepherd and Lapple" in section
+    assert "An estimate: published models side by side" in section
+    assert "Weigh and measure after building." in section
 
 
 def test_pieces_are_listed_with_copies_sizes_and_masses(contents: KitContents) -> None:

@@ -55,7 +55,7 @@ class Nearness:
     depth_place_mm : tuple of 3 float
         Where that is [mm].
     inside : int
-        Sampled places of either that lie inside the other.
+        Sampled places of either that lie deeper in the other than facets account for.
     """
 
     gap_mm: float
