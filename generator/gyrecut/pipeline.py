@@ -9,7 +9,7 @@ from typing import TYPE_CHECKING, Any
 
 from gyrecut import __version__
 from gyrecut.airflow.air import air_state, air_state_at_pressure
-from gyrecut.catalogue import fasteners, polymers
+from gyrecut.catalogue import bin_materials, fasteners, polymers
 from gyrecut.kit.assembly import hardware, steps
 from gyrecut.kit.contents import KitContents, Polymer
 from gyrecut.kit.facts import body_facts, estimate_facts
@@ -20,13 +20,16 @@ from gyrecut.profile.models import profile_hash
 from gyrecut.proportions.printing import bed_of
 from gyrecut.proportions.proportioning import geometry_of, proportion
 from gyrecut.proportions.rules import geometry_rules
+from gyrecut.separation.air_path import suction_source
 from gyrecut.separation.answers import answers_to
 from gyrecut.separation.chain import Step
 from gyrecut.separation.forecast import forecast
 from gyrecut.separation.limits import Totals, limit_findings
-from gyrecut.separation.outlook import outlook_findings, sizing_flow
+from gyrecut.separation.outlook import outlook_findings, sizing_flow, suction_in_bin
 from gyrecut.separation.sizes import sizes_of
 from gyrecut.separation.uncertainty import Doubt
+from gyrecut.strength.findings import strength_findings
+from gyrecut.strength.inputs import StrengthInputs, assumed_source
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Iterator
@@ -173,6 +176,7 @@ def design(profile: Profile) -> Design:
         )
         if arriving is not None:
             arriving *= 1 - stage.forecast.kept_of_arriving
+    findings += _strength(profile, stages, expected=expected, air=air, dust=dust)
     findings += outlook_findings(
         expected, dust=dust, leak=profile.air.bin_leak, target=profile.air.flow
     )
@@ -188,6 +192,36 @@ def design(profile: Profile) -> Design:
         ),
         findings=tuple(findings),
     )
+
+
+def _strength(
+    profile: Profile,
+    stages: tuple[StageDesign, ...],
+    *,
+    expected: Forecast,
+    air: AirState,
+    dust: Dust,
+) -> Iterator[Finding]:
+    source = suction_source(profile, air)
+    assumed = assumed_source(flow=expected.flow, on_board=profile.outlet.kind == "blower")
+    inputs = StrengthInputs(
+        polymer=polymers()[profile.material],
+        fastener=fasteners()[profile.joints.fastener],
+        bin_material=bin_materials()[profile.bin.material],
+        bin_volume=profile.bin.volume,
+        bin_mouth=profile.bin.mouth,
+        bin_wall=profile.bin.wall,
+        bulk_density=dust.bulk_density,
+        shut_off=assumed.shut_off if source is None else source.shut_off,
+        open_flow=assumed.open_flow if source is None else source.open_flow,
+        assumed_source=assumed.title if source is None else "",
+        relief_setting=profile.bin.relief,
+        working_suction=suction_in_bin(expected),
+        air_temperature=profile.air.temperature,
+        air_density=air.density,
+    )
+    for stage in stages:
+        yield from strength_findings(stage.dimensions, inputs)
 
 
 def _air_of(profile: Profile) -> AirState:

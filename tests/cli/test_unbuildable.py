@@ -14,9 +14,9 @@ CASES = {
         "luthier-sander",
         ("[220 mm, 220 mm, 250 mm]", "[70 mm, 70 mm, 70 mm]"),
         """\
-gyrecut: shop.yaml:50:3: P090 printer.build_volume is too low for the ring with slot and portal, \
+gyrecut: shop.yaml:51:3: P090 printer.build_volume is too low for the ring with slot and portal, \
 which stays whole
-  50 |   build_volume: [70 mm, 70 mm, 70 mm]      # width, depth, height
+  51 |   build_volume: [70 mm, 70 mm, 70 mm]      # width, depth, height
      |   ^^^^^^^^^^^^
   given: 65 mm of height
   allowed: at least 98 mm
@@ -27,8 +27,8 @@ which stays whole
         "luthier-sander",
         ("[220 mm, 220 mm, 250 mm]", "[90 mm, 90 mm, 250 mm]"),
         """\
-gyrecut: shop.yaml:50:3: P090 printer.build_volume is too small for any sector of ring 1 of the body
-  50 |   build_volume: [90 mm, 90 mm, 250 mm]      # width, depth, height
+gyrecut: shop.yaml:51:3: P090 printer.build_volume is too small for any sector of ring 1 of the body
+  51 |   build_volume: [90 mm, 90 mm, 250 mm]      # width, depth, height
      |   ^^^^^^^^^^^^
   given: a bed that leaves 80 x 80 mm
   allowed: room for a piece that reaches 121 mm from the axis, 79 degrees of it (slot and portal) \

@@ -398,7 +398,7 @@ def test_screws_too_far_apart_ask_for_a_lid_that_bridges_them(luthier: Dimension
 def test_how_far_apart_screws_may_be(luthier: Dimensions) -> None:
     # A built-in strip of the lid, 0.8 GPa held for hours, on a sponge of 50 kPa, may bow 0.1 mm;
     # its width, that of the rim, does not matter: B^4 = 32 E t^3 w / p.
-    finding = found(luthier, INPUTS)["screws-far-apart"]
+    finding = found(luthier, INPUTS)["screws-near-enough"]
     assert finding.limit == pytest.approx((32 * 0.8e3 * 6.0**3 * 0.1 / 50e-3) ** 0.25)
     # half of two threads and six flanges: (8 + 36) / 2
     assert "22 mm by half of the pitch in steel flanges" in finding.where

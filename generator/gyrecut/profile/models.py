@@ -10,7 +10,7 @@ from typing import TYPE_CHECKING, Annotated, Any, ClassVar, Literal
 
 from pydantic import Field
 
-from gyrecut.catalogue import dusts, families, fasteners, polymers
+from gyrecut.catalogue import bin_materials, dusts, families, fasteners, polymers
 from gyrecut.profile.air import FIT, Air, Fit, HoseName
 from gyrecut.profile.bounds import (
     BIN_WALL,
@@ -38,6 +38,7 @@ from gyrecut.profile.bounds import (
     OVERHANG,
     PIXEL,
     RATIO,
+    RELIEF,
     SHAPE_FACTOR,
     SPREAD,
     VELOCITY,
@@ -244,14 +245,13 @@ class Bin(Group):
     volume: Annotated[float, VOLUME] = Field(description="What the bin holds")
     mouth: Annotated[float, MOUTH] = Field(description="Inside diameter of its opening")
     wall: Annotated[float, BIN_WALL] = Field(description="Thickness of its wall")
-    material: Annotated[
-        Literal["HDPE", "steel", "plywood", "card-drum"],
-        OneOf(
-            noun="bin material",
-            names=lambda: ("HDPE", "steel", "plywood", "card-drum"),
-            example="HDPE",
-        ),
-    ] = Field(description="What it is made of")
+    material: Annotated[str, OneOf(noun="bin material", names=bin_materials, example="HDPE")] = (
+        Field(description="What it is made of, from the catalogue")
+    )
+    relief: Annotated[float, RELIEF] | None = Field(
+        default=None,
+        description="Suction at which a relief valve on the bin opens; none where left out",
+    )
 
 
 class Printer(Group):

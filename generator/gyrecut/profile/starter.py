@@ -58,6 +58,7 @@ bin:
   mouth: 260 mm                 # inside of the opening
   wall: 2 mm                    # thickness; too thin, and the bin collapses
   material: HDPE                # HDPE, steel, plywood or card-drum
+  # relief: 5 kPa               # where a relief valve on it opens
 
 printer:
   process: filament             # filament or resin; resin takes pixel, not nozzle and line_width

@@ -8,7 +8,7 @@ barrel at (0, +radius), and so turns clockwise seen from above.
 from __future__ import annotations
 
 from dataclasses import dataclass
-from math import atan2, cos, hypot, tan
+from math import atan2, cos, hypot, pi, tan
 
 Point = tuple[float, float]
 
@@ -302,6 +302,11 @@ class Ring:
     first_cut: float
 
     @property
+    def cuts(self) -> tuple[float, ...]:
+        """Angles of its sector cuts [rad], none where it is whole."""
+        return cut_angles(self.sectors, self.first_cut)
+
+    @property
     def height_mm(self) -> float:
         """Height of the slice without its socket collar."""
         return self.top_mm - self.bottom_mm
@@ -319,6 +324,11 @@ class Division:
     def cut_heights_mm(self) -> tuple[float, ...]:
         """Heights of the ring cuts, from the top down."""
         return tuple(ring.bottom_mm for ring in self.rings[:-1])
+
+    @property
+    def seams_under_the_lid(self) -> tuple[float, ...]:
+        """Angles of the sector cuts of lid and first ring [rad], where no screw can stand."""
+        return (*self.rings[0].cuts, *cut_angles(self.lid_sectors, self.lid_first_cut))
 
     @property
     def piece_count(self) -> int:
@@ -376,6 +386,13 @@ class Dimensions:
     def overall_height_mm(self) -> float:
         """From the underside of the bin ring to the outlet's upper end."""
         return self.outlet_top_mm + self.body.total_height_mm + self.bin_ring.thickness_mm
+
+
+def cut_angles(sectors: int, first_cut: float) -> tuple[float, ...]:
+    """Angles of equally spaced cuts [rad]; one sector is no cut."""
+    if sectors == 1:
+        return ()
+    return tuple(first_cut + 2 * pi * index / sectors for index in range(sectors))
 
 
 def keel_bottom(body: Body, portal: Portal, slope: float) -> float:

@@ -17,7 +17,7 @@ if TYPE_CHECKING:
 
     from numpy.typing import NDArray
 
-    from gyrecut.proportions.dimensions import Body, Joint, Portal, Rim
+    from gyrecut.proportions.dimensions import Body, Joint, Portal
     from gyrecut.proportions.printing import Bed
 
 MOST_SECTORS = 12
@@ -62,8 +62,6 @@ class _Plan:
     radius_mm: float
     corners_mm: tuple[tuple[float, float], ...]
     keep_whole: tuple[float, float] | None
-    obstacles: tuple[float, ...]
-    obstacle_mm: float
     lap_mm: float
 
 
@@ -103,7 +101,7 @@ def _outline(plan: _Plan, start: float, end: float) -> NDArray[np.float64]:
 
 
 def _first_cut(plan: _Plan, count: int, stagger: float) -> float | None:
-    """Angle of the first cut: clear of slot and screws, nearest to `stagger` among the best."""
+    """Angle of the first cut: clear of the slot, the nearest on from `stagger`."""
     step = 2 * pi / count
     trials = stagger + np.linspace(0.0, step, 181)[:-1]
     cuts = trials[:, None] + step * np.arange(count)
@@ -113,10 +111,6 @@ def _first_cut(plan: _Plan, count: int, stagger: float) -> float | None:
         low, high = plan.keep_whole
         inside = (cuts - (low - reach)) % (2 * pi) <= (high - low) + 2 * reach
         good &= ~inside.any(axis=1)
-    if plan.obstacles:
-        away = (cuts[:, :, None] - np.array(plan.obstacles) + pi) % (2 * pi) - pi
-        nearest = np.abs(away).min(axis=(1, 2))
-        good &= nearest >= reach + plan.obstacle_mm / 2 / plan.radius_mm
     chosen = np.flatnonzero(good)
     return float(trials[chosen[0]] % (2 * pi)) if chosen.size else None
 
@@ -129,14 +123,12 @@ def slot_arc(body: Body, portal: Portal) -> tuple[float, float]:
     return pi / 2 - spare, max(at_face, at_barrel) + body.wall_mm / body.radius_mm
 
 
-def _top_plan(body: Body, portal: Portal, rim: Rim, joint: Joint) -> _Plan:
+def _top_plan(body: Body, portal: Portal, rim_radius_mm: float, joint: Joint) -> _Plan:
     x, low, high = portal.face_x_mm, portal.frame_low_y_mm, portal.frame_high_y_mm
     return _Plan(
-        radius_mm=rim.outer_radius_mm,
+        radius_mm=rim_radius_mm,
         corners_mm=((x, low), (x, high), (0.0, high)),
         keep_whole=slot_arc(body, portal),
-        obstacles=tuple(atan2(y, x) for x, y in rim.screws.places_mm),
-        obstacle_mm=rim.screws.boss_mm,
         lap_mm=joint.lap_mm,
     )
 
@@ -147,14 +139,12 @@ def _ring_plan(body: Body, joint: Joint, top_mm: float) -> _Plan:
         radius_mm=body.outside_radius_at(top_mm + joint.lap_mm) + reach,
         corners_mm=(),
         keep_whole=None,
-        obstacles=(),
-        obstacle_mm=0.0,
         lap_mm=joint.lap_mm,
     )
 
 
 def divide(
-    *, body: Body, portal: Portal, rim: Rim, joint: Joint, bed: Bed, slope: float
+    *, body: Body, portal: Portal, rim_radius_mm: float, joint: Joint, bed: Bed, slope: float
 ) -> Division:
     """Divide body and lid into pieces that fit the bed.
 
@@ -162,8 +152,10 @@ def divide(
 
     Parameters
     ----------
-    body, portal, rim, joint : Body, Portal, Rim, Joint
+    body, portal, joint : Body, Portal, Joint
         The separator.
+    rim_radius_mm : float
+        Outside radius of the lid's flange [mm].
     bed : Bed
         What the printer leaves for one piece.
     slope : float
@@ -178,7 +170,7 @@ def divide(
     UnbuildableError
         Where a ring, a sector or the slot does not fit the printer.
     """
-    top = _top_plan(body, portal, rim, joint)
+    top = _top_plan(body, portal, rim_radius_mm, joint)
     # a sector with the portal would tip over on its arc alone: let it stand on the keel
     on_keel = not best_turn(_outline(top, 0.0, 2 * pi), bed)[1]
     unsteady: tuple[Ring, ...] | None = None

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from itertools import pairwise
 from math import atan2, cos, pi, radians, sin, tan
 from typing import TYPE_CHECKING
 
@@ -36,7 +37,15 @@ def rim_radius(body: Body, fastener: str) -> float:
     return body.outer_radius_mm + screws(fastener, ()).boss_mm
 
 
-def rim(*, body: Body, portal: Portal, fastener: str, slope: float) -> Rim:
+def rim(
+    *,
+    body: Body,
+    portal: Portal,
+    fastener: str,
+    slope: float,
+    seams: tuple[float, ...],
+    lap_mm: float,
+) -> Rim:
     """Proportion the lid's flange and place its screws round barrel and slot.
 
     Parameters
@@ -47,6 +56,10 @@ def rim(*, body: Body, portal: Portal, fastener: str, slope: float) -> Rim:
         Catalogue name of the screws.
     slope : float
         Lean of the gusset under the flange, from the vertical [rad].
+    seams : tuple of float
+        Angles of sector cuts that a screw has to keep clear of [rad].
+    lap_mm : float
+        How far the sectors lap over each other there [mm].
 
     Returns
     -------
@@ -61,10 +74,13 @@ def rim(*, body: Body, portal: Portal, fastener: str, slope: float) -> Rim:
     outer_y = body.outer_radius_mm + boss / 2
     inner_y = body.radius_mm - portal.mouth_width_mm - body.wall_mm - boss / 2
     # clockwise from the slot's tangent point, the long way round to the lintel's inner end
-    arc = spread(pi / 2, atan2(inner_y, lintel_x) % (2 * pi) - 2 * pi, PITCH_SPARE_MM / circle)[:-1]
+    last = atan2(inner_y, lintel_x) % (2 * pi) - 2 * pi
+    arc = _clear_of_seams(
+        last, pi / 2, seams, pitch=PITCH_SPARE_MM / circle, clear=(boss + lap_mm) / 2 / circle
+    )
     beside = spread(0.0, lintel_x, PITCH_SPARE_MM)[1:]
     places: tuple[Point, ...] = (
-        *((circle * cos(angle), circle * sin(angle)) for angle in arc),
+        *((circle * cos(angle), circle * sin(angle)) for angle in arc if angle > last),
         *((x, outer_y) for x in beside),
         (lintel_x, inner_y),
     )
@@ -73,6 +89,23 @@ def rim(*, body: Body, portal: Portal, fastener: str, slope: float) -> Rim:
         thickness_mm=max(RIM_LEAST_MM, row.insert_depth_mm + RIM_FLOOR_MM - gusset_at_hole),
         screws=screws(fastener, places),
     )
+
+
+def _clear_of_seams(
+    start: float, end: float, seams: tuple[float, ...], *, pitch: float, clear: float
+) -> list[float]:
+    """Spread angles over an arc, the ones next to a seam `clear` away from it [rad]."""
+    inside = sorted(start + (seam - start) % (2 * pi) for seam in seams)
+    edges = [start, *(seam for seam in inside if seam < end), end]
+    angles: list[float] = []
+    for low, high in pairwise(edges):
+        first = low if low == start else low + clear
+        last = high if high == end else high - clear
+        if last > first:
+            angles += spread(first, last, pitch)
+        elif last > first - clear:
+            angles.append((first + last) / 2)
+    return angles
 
 
 def finder(*, body: Body, bore_mm: float, length_mm: float, stub_mm: float) -> Finder:

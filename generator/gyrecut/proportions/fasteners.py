@@ -13,7 +13,7 @@ if TYPE_CHECKING:
 
 MM = 1000.0
 INSERT_HOLE_SPARE_MM = 1.0  # melt collects under the insert: common practice, no source
-PITCH_SPARE_MM = 60.0  # between screws of a flange in plastic: common practice, no source
+PITCH_SPARE_MM = 55.0  # between screws of a flange in plastic: common practice, no source
 
 
 def screws(name: str, places_mm: tuple[Point, ...]) -> Screws:

@@ -229,7 +229,14 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         bridge_limit_mm=printer.bridge_limit * MM,
         edge_mm=max(EDGE_SHARE * wall, smallest_wall_mm(printer)),
     )
-    flange = rim(body=body, portal=mouth, fastener=fastener, slope=slope)
+    division = divide(
+        body=body,
+        portal=mouth,
+        rim_radius_mm=rim_radius(body, fastener),
+        joint=joint,
+        bed=bed,
+        slope=slope,
+    )
     tube = finder(
         body=body,
         bore_mm=_times(shape.finder_diameter, diameter_mm),
@@ -241,7 +248,14 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         body=body,
         slot=slot,
         finder=tube,
-        rim=flange,
+        rim=rim(
+            body=body,
+            portal=mouth,
+            fastener=fastener,
+            slope=slope,
+            seams=division.seams_under_the_lid,
+            lap_mm=joint.lap_mm,
+        ),
         portal=mouth,
         transition=transition(
             body=body, slot=slot, portal=mouth, cuff=cuff, slope=slope, tallest_mm=bed.height_mm
@@ -252,7 +266,7 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         ),
         outlet=_outlet(profile, tube, joint, slope),
         joint=joint,
-        division=divide(body=body, portal=mouth, rim=flange, joint=joint, bed=bed, slope=slope),
+        division=division,
         slope=slope,
     )
 

@@ -23,6 +23,7 @@ if TYPE_CHECKING:
     from gyrecut.profile.models import Profile, Stage
     from gyrecut.separation.forecast import Forecast
 
+AFTER_SEPARATOR = ("outlet", "bell-mouth")  # parts of the air path, see `air_path.system_of`
 MUCH_LEAK = 0.01  # 1 to 3 % visibly hurts: Perry's handbook and Strauss, from memory, weak
 SMALL_GAIN = 0.01  # of the whole mass: a stage that keeps less than this hardly pays
 # From here on the speed in body and hose is another one than what they were chosen for; within, no
@@ -84,6 +85,20 @@ def _slot_area(stage: Stage) -> float | None:
         return None
     shape = shape_of(stage)
     return float(shape.slot_height * shape.slot_width) * stage.body_diameter**2 * stage.count
+
+
+def suction_in_bin(expected: Forecast) -> float:
+    """Give the suction in the bin in normal work [Pa]: all that is lost before the outlet.
+
+    The core of the vortex lies below the pressure of the room by as much; the bin, at its foot,
+    by no more.
+    """
+    lost = 0.0
+    for share in expected.clean.shares:
+        if share.name in AFTER_SEPARATOR:
+            break
+        lost += float(share.pressure_drop)
+    return lost
 
 
 def outlook_findings(

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from typing import TYPE_CHECKING
 
 from gyrecut.findings import Finding, Severity
@@ -32,7 +33,8 @@ def strength_findings(d: Dimensions, inputs: StrengthInputs) -> tuple[Finding, .
     -------
     tuple of Finding
         A stop where the margin is below 1, a warning where it is below the safety factor (2 with
-        a relief opening, 3 without), a note with the margin otherwise.
+        a relief opening, 3 without), a note with the margin otherwise. A source that is only
+        assumed stops nothing: its stops are warnings.
 
     Raises
     ------
@@ -40,7 +42,7 @@ def strength_findings(d: Dimensions, inputs: StrengthInputs) -> tuple[Finding, .
         Where a number lies outside what the formulas hold for.
     """
     weakest = min(body_holds_to(d, inputs), lid_holds_to(d, inputs), bin_holds_to(inputs))
-    return (
+    found = (
         *_suction(inputs),
         *body_findings(d, inputs),
         *lid_findings(d, inputs),
@@ -50,6 +52,12 @@ def strength_findings(d: Dimensions, inputs: StrengthInputs) -> tuple[Finding, .
         *screw_findings(d, inputs),
         *warmth_findings(inputs),
     )
+    return tuple(map(_softened, found)) if inputs.assumed_source else found
+
+
+def _softened(finding: Finding) -> Finding:
+    stops = finding.severity is Severity.STOP
+    return replace(finding, severity=Severity.WARN) if stops else finding
 
 
 def _suction(inputs: StrengthInputs) -> Iterator[Finding]:

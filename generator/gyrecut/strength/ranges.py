@@ -31,4 +31,4 @@ THIN_PLATE = Range(
 STRENGTH = Range(quantity="strength", low=1e4, high=1e10, unit="Pa", source=_SOURCE)
 AREA = Range(quantity="area", low=1e-9, high=100.0, unit="m^2", source=_SOURCE)
 FLOW = Range(quantity="air flow", low=0.0, high=100.0, unit="m^3/s", source=_SOURCE)
-DENSITY = Range(quantity="density", low=1.0, high=25e3, unit="kg/m^3", source=_SOURCE)
+DENSITY = Range(quantity="density", low=0.2, high=25e3, unit="kg/m^3", source=_SOURCE)
