@@ -28,12 +28,12 @@ def designed(name: str) -> tuple[Dimensions, str]:
 def test_a_screw_bites_the_insert_and_stays_off_the_bottom(name: str) -> None:
     d, fastener = designed(name)
     row = fasteners()[fastener]
-    bought = {item.where: item for item in hardware(d, row, copies=1)}
-    gasket = 2.0  # 3 mm foam drawn up by a third
-    for where, plate, screws in (
-        ("lid", d.lid.thickness_mm, d.rim.screws),
-        ("transition", d.transition.flange_thickness_mm, d.portal.screws),
+    bought = {item.where: item for item in hardware(d, row, copies=1) if "screw" in item.what}
+    for where, plate, screws, groove in (
+        ("lid", d.lid.thickness_mm, d.rim.screws, d.seals.lid),
+        ("transition", d.transition.flange_thickness_mm, d.portal.screws, d.seals.transition),
     ):
+        gasket = 2.0 if groove is None else 0.0  # 3 mm foam drawn up by a third
         assert bought[where].quantity == str(len(screws.places_mm))
         length = int(bought[where].what.split(" x ")[1].split()[0])
         assert length in SCREW_LENGTHS_MM

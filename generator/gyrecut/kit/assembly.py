@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
-from math import ceil, pi
+from dataclasses import dataclass
+from itertools import pairwise
+from math import ceil, dist, pi
 from typing import TYPE_CHECKING
 
 from gyrecut.kit.contents import Hardware
@@ -12,9 +14,10 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from gyrecut.catalogue.rows import Fastener
-    from gyrecut.proportions.dimensions import Dimensions
+    from gyrecut.proportions.dimensions import Dimensions, Groove
 
 SCREW_LENGTHS_MM = (6, 8, 10, 12, 16, 20, 25, 30, 35, 40, 45, 50)  # preferred, ISO 4762 lists
+CORD_SPARE = 1.05  # length to cut to fit
 GASKET_MM = 3.0  # closed-cell foam
 SQUEEZED_MM = 2.0  # the same drawn up by a third: seal makers' notes, common practice
 BIN_LID_MM = 4.0  # thickness of a pail lid or drum head with a washer: common practice, no source
@@ -46,14 +49,14 @@ def hardware(d: Dimensions, fastener: Fastener, *, copies: int) -> Iterator[Hard
         where="rim and portal of the body",
     )
     yield Hardware(
-        what=f"{lid.thread} x {_screw_into_insert(d.lid.thickness_mm, lid.insert_depth_mm)} screw "
+        what=f"{lid.thread} x {_screw_into_insert(d.lid.thickness_mm, lid.insert_depth_mm, d.seals.lid)} screw "
         "and washer",
         quantity=str(in_lid),
         where="lid",
     )
     flange = d.transition.flange_thickness_mm
     yield Hardware(
-        what=f"{portal.thread} x {_screw_into_insert(flange, portal.insert_depth_mm)} screw "
+        what=f"{portal.thread} x {_screw_into_insert(flange, portal.insert_depth_mm, d.seals.transition)} screw "
         "and washer",
         quantity=str(in_portal),
         where="transition",
@@ -64,16 +67,77 @@ def hardware(d: Dimensions, fastener: Fastener, *, copies: int) -> Iterator[Hard
         quantity=str(len(ring.places_mm) * copies),
         where="bin ring, through the bin's lid",
     )
-    yield Hardware(
-        what=f"flat gasket, closed-cell foam {GASKET_MM:g} mm",
-        quantity=f"{_gasket_cm2(d) * copies:.0f} cm2",
-        where="under the lid, behind the transition, under the bin ring",
-    )
+    yield from _seals(d, copies)
     yield Hardware(
         what="epoxy glue for the printed polymer",
         quantity=f"{max(5.0, ceil(_glue_cm3(d) * copies)):.0f} cm3",
         where="ring joints, sector laps, finder and outlet",
     )
+
+
+def _seals(d: Dimensions, copies: int) -> Iterator[Hardware]:
+    """List cord by its length and foam by its area, for the joints that take them."""
+    joints = _sealed_joints(d)
+    cords = [joint for joint in joints if joint.groove is not None]
+    if cords:
+        groove = cords[0].groove
+        length = sum(joint.edge_mm + 2 * pi * groove.middle_mm for joint in cords)
+        yield Hardware(
+            what=f"soft round cord {groove.cord_mm:g} mm, ends cut square and glued",
+            quantity=f"{CORD_SPARE * length * copies / 1000:.2f} m",
+            where=", ".join(joint.where for joint in cords),
+        )
+    foamed = [joint for joint in joints if joint.groove is None]
+    if foamed:
+        area = sum(joint.face_mm2 for joint in foamed)
+        yield Hardware(
+            what=f"flat gasket, closed-cell foam {GASKET_MM:g} mm",
+            quantity=f"{area * copies / 100:.0f} cm2",
+            where=", ".join(joint.where for joint in foamed),
+        )
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class _SealedJoint:
+    where: str
+    groove: Groove | None
+    edge_mm: float
+    face_mm2: float
+
+
+def _sealed_joints(d: Dimensions) -> tuple[_SealedJoint, ...]:
+    portal, ring, body = d.portal, d.bin_ring, d.body
+    frame_width = portal.frame_high_y_mm - portal.frame_low_y_mm
+    channel = -portal.face_x_mm - portal.depth_mm
+    mouth = portal.mouth_outline(body.radius_mm)
+    return (
+        _SealedJoint(
+            where="lid",
+            groove=d.seals.lid,
+            # three quarters of the barrel's edge, and the channel's three sides
+            edge_mm=1.5 * pi * body.radius_mm + 2 * channel + portal.mouth_width_mm,
+            face_mm2=pi * d.rim.outer_radius_mm**2 - portal.face_x_mm * frame_width,
+        ),
+        _SealedJoint(
+            where="transition",
+            groove=d.seals.transition,
+            edge_mm=sum(dist(a, b) for a, b in pairwise((*mouth, mouth[0]))),
+            face_mm2=-frame_width * portal.frame_bottom_z_mm,
+        ),
+        _SealedJoint(
+            where="bin ring",
+            groove=d.seals.bin_ring,
+            edge_mm=pi * ring.bore_mm,
+            face_mm2=pi * (ring.outer_radius_mm**2 - ring.bore_mm**2 / 4),
+        ),
+    )
+
+
+def _seal_of(groove: Groove | None, groove_in: str, face: str) -> str:
+    """Say how one joint is sealed, as the beginning of a sentence."""
+    if groove is None:
+        return f"Lay a gasket on {face}"
+    return f"Press the cord into the groove in {groove_in}, its ends glued to a ring"
 
 
 def steps(d: Dimensions, *, copies: int) -> Iterator[str]:
@@ -117,16 +181,18 @@ def steps(d: Dimensions, *, copies: int) -> Iterator[str]:
     else:
         yield "Glue the outlet's socket over the finder's upper end."
     yield (
-        "Lay a gasket on the rim, cut out for barrel and slot, lay the lid on it and draw its "
-        "screws up crosswise; they come from above."
+        f"{_seal_of(d.seals.lid, 'the rim', 'the rim, cut out for barrel and slot')}, lay the lid "
+        "on it and draw its screws up crosswise; they come from above."
     )
     yield (
-        "Lay a gasket round the mouth and screw the transition to the portal; the screws stand "
-        "beside the duct, a driver passes the cuff."
+        f"{_seal_of(d.seals.transition, 'the flange', 'the portal, cut out for the mouth')} and "
+        "screw the transition to the portal; the screws stand beside the duct, a driver passes "
+        "the cuff."
     )
     yield (
-        f"Cut a hole of {d.bin_ring.bore_mm:.0f} mm into the bin's lid, drill it through the "
-        "ring's holes, and screw the ring down on a gasket."
+        f"Cut a hole of {d.bin_ring.bore_mm:.0f} mm into the bin's lid and drill it through the "
+        f"ring's holes. {_seal_of(d.seals.bin_ring, 'the ring', 'the lid')} and screw the ring "
+        "down."
     )
     yield (
         "Close hose and outlet, draw a little suction and listen at every joint; any leak at the "
@@ -134,9 +200,10 @@ def steps(d: Dimensions, *, copies: int) -> Iterator[str]:
     )
 
 
-def _screw_into_insert(plate_mm: float, hole_mm: float) -> int:
+def _screw_into_insert(plate_mm: float, hole_mm: float, groove: Groove | None) -> int:
     """Longest standard screw through plate and gasket that stays off the insert hole's bottom."""
-    deepest = plate_mm + SQUEEZED_MM + hole_mm - SPARE_MM
+    foam = SQUEEZED_MM if groove is None else 0.0
+    deepest = plate_mm + foam + hole_mm - SPARE_MM
     return max(
         (length for length in SCREW_LENGTHS_MM if length <= deepest),
         default=SCREW_LENGTHS_MM[0],
@@ -148,15 +215,6 @@ def _shortest_screw(grip_mm: float) -> int:
         (length for length in SCREW_LENGTHS_MM if length >= grip_mm + SPARE_MM),
         SCREW_LENGTHS_MM[-1],
     )
-
-
-def _gasket_cm2(d: Dimensions) -> float:
-    portal, ring = d.portal, d.bin_ring
-    disc = pi * d.rim.outer_radius_mm**2
-    tab = -portal.face_x_mm * (portal.frame_high_y_mm - portal.frame_low_y_mm)
-    frame = (portal.frame_high_y_mm - portal.frame_low_y_mm) * -portal.frame_bottom_z_mm
-    foot = pi * (ring.outer_radius_mm**2 - ring.bore_mm**2 / 4)
-    return (disc + tab + frame + foot) / 100
 
 
 def _glue_cm3(d: Dimensions) -> float:

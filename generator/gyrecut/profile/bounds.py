@@ -60,6 +60,7 @@ CLEARANCE = _length("0 mm", "2 mm", "0.2 mm")
 MARGIN = _length("0 mm", "50 mm", "5 mm")
 WALL = _length("0.8 mm", "20 mm", "2.4 mm")
 LID = _length("1 mm", "40 mm", "6 mm")
+CORD = _length("1.5 mm", "8 mm", "3 mm")
 LAP = _length("3 mm", "60 mm", "10 mm")
 HEIGHT = _length("0.1 m", "5 m", "1.2 m")
 

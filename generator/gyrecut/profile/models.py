@@ -19,6 +19,7 @@ from gyrecut.profile.bounds import (
     BUILD,
     CHIP,
     CLEARANCE,
+    CORD,
     CUT,
     FEED,
     GRAIN,
@@ -324,6 +325,10 @@ class Walls(Group):
     lid: Annotated[float, LID] = Field(description="Thickness of the lid")
 
 
+Seal = Literal["cord", "gasket"]
+SEAL = OneOf(noun="seal", names=lambda: ("cord", "gasket"), example="cord")
+
+
 class Joints(Group):
     """How pieces go together."""
 
@@ -335,6 +340,19 @@ class Joints(Group):
     )
     fastener: Annotated[str, OneOf(noun="fastener", names=fasteners, example="M4")] = Field(
         default="M4", description="Screw for all flanges; M4 where left out"
+    )
+    lid: Annotated[Seal, SEAL] = Field(
+        default="gasket", description="Seal under the lid: cord in a groove, or a flat gasket"
+    )
+    transition: Annotated[Seal, SEAL] = Field(
+        default="gasket", description="Seal behind the transition: cord in a groove, or gasket"
+    )
+    bin_ring: Annotated[Seal, SEAL] = Field(
+        default="gasket", description="Seal under the bin ring: cord in a groove, or gasket"
+    )
+    cord: Annotated[float, CORD] = Field(
+        default_factory=partial(CORD.si, "3 mm"),
+        description="Diameter of the sealing cord; 3 mm where left out",
     )
 
 

@@ -128,6 +128,45 @@ class Screws:
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
+class Groove:
+    """A groove for a sealing cord in one of two flat faces.
+
+    `wall_mm` is left between the air's edge and the groove, where suction draws the cord;
+    `land_mm` between the groove and what stands outside of it.
+    """
+
+    cord_mm: float
+    width_mm: float
+    depth_mm: float
+    wall_mm: float
+    land_mm: float
+
+    @property
+    def outer_mm(self) -> float:
+        """From the air's edge to the groove's outer edge."""
+        return self.wall_mm + self.width_mm
+
+    @property
+    def clear_mm(self) -> float:
+        """From the air's edge to where the next hole or edge may begin."""
+        return self.outer_mm + self.land_mm
+
+    @property
+    def middle_mm(self) -> float:
+        """From the air's edge to the middle of the cord."""
+        return self.wall_mm + self.width_mm / 2
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Seals:
+    """How the joints that open are sealed: a cord in a groove, or None for a flat gasket."""
+
+    lid: Groove | None
+    transition: Groove | None
+    bin_ring: Groove | None
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
 class Rim:
     """The flange round the top of the barrel that the lid is screwed to."""
 
@@ -354,6 +393,7 @@ class Dimensions:
     bin_ring: BinRing
     outlet: OutletCuff | BellMouth
     joint: Joint
+    seals: Seals
     division: Division
     slope: float
 

@@ -16,10 +16,10 @@ from gyrecut.proportions.dimensions import (
     OutletCuff,
     Rim,
 )
-from gyrecut.proportions.fasteners import PITCH_SPARE_MM, screws, spread
+from gyrecut.proportions.fasteners import PITCH_SPARE_MM, screw_line, screws, spread
 
 if TYPE_CHECKING:
-    from gyrecut.proportions.dimensions import Body, Cuff, Joint, Point, Portal
+    from gyrecut.proportions.dimensions import Body, Cuff, Groove, Joint, Point, Portal
 
 RIM_FLOOR_MM = 2.0  # plastic left under an insert hole
 RIM_LEAST_MM = 4.0
@@ -32,9 +32,9 @@ COLLAR_MM = 8.0  # how far the finder's collar lies on the lid, for glue
 SPIGOT_REACH = 0.4  # blower spigot length over throat: common practice, no source
 
 
-def rim_radius(body: Body, fastener: str) -> float:
-    """Outside radius of the lid's flange [mm]: one boss beyond the wall."""
-    return body.outer_radius_mm + screws(fastener, ()).boss_mm
+def rim_radius(body: Body, fastener: str, line_mm: float) -> float:
+    """Outside radius of the lid's flange [mm]: half a boss beyond the screws."""
+    return body.radius_mm + line_mm + screws(fastener, ()).boss_mm / 2
 
 
 def rim(
@@ -43,6 +43,7 @@ def rim(
     portal: Portal,
     fastener: str,
     slope: float,
+    line_mm: float,
     seams: tuple[float, ...],
     lap_mm: float,
 ) -> Rim:
@@ -56,6 +57,8 @@ def rim(
         Catalogue name of the screws.
     slope : float
         Lean of the gusset under the flange, from the vertical [rad].
+    line_mm : float
+        From the air's edge to the screws [mm].
     seams : tuple of float
         Angles of sector cuts that a screw has to keep clear of [rad].
     lap_mm : float
@@ -69,10 +72,10 @@ def rim(
     row = screws(fastener, ())
     boss, hole = row.boss_mm, row.insert_hole_mm
     gusset_at_hole = (boss / 2 - hole / 2) / tan(slope)
-    circle = body.outer_radius_mm + boss / 2
+    circle = body.radius_mm + line_mm
     lintel_x = portal.face_x_mm + portal.depth_mm / 2
-    outer_y = body.outer_radius_mm + boss / 2
-    inner_y = body.radius_mm - portal.mouth_width_mm - body.wall_mm - boss / 2
+    outer_y = body.radius_mm + line_mm
+    inner_y = body.radius_mm - portal.mouth_width_mm - line_mm
     # clockwise from the slot's tangent point, the long way round to the lintel's inner end
     last = atan2(inner_y, lintel_x) % (2 * pi) - 2 * pi
     arc = _clear_of_seams(
@@ -85,7 +88,7 @@ def rim(
         (lintel_x, inner_y),
     )
     return Rim(
-        outer_radius_mm=body.outer_radius_mm + boss,
+        outer_radius_mm=rim_radius(body, fastener, line_mm),
         thickness_mm=max(RIM_LEAST_MM, row.insert_depth_mm + RIM_FLOOR_MM - gusset_at_hole),
         screws=screws(fastener, places),
     )
@@ -191,13 +194,17 @@ def bell_mouth(*, finder: Finder, throat_mm: float, joint: Joint) -> BellMouth:
     )
 
 
-def bin_ring(*, body: Body, joint: Joint, fastener: str, lid_thickness_mm: float) -> BinRing:
+def bin_ring(
+    *, body: Body, joint: Joint, fastener: str, lid_thickness_mm: float, groove: Groove | None
+) -> BinRing:
     """Proportion the ring on the bin's lid, screws outside its socket."""
     row = screws(fastener, ())
     socket = body.outside_radius_at(-body.total_height_mm + joint.lap_mm) + (
         joint.clearance_mm + joint.collar_mm
     ) / cos(body.half_angle)
-    circle = socket + row.boss_mm / 2
+    bore = body.dust_outlet_diameter_mm / 2
+    line = screw_line(row, wall_mm=body.wall_mm, grooves=(groove,))
+    circle = max(socket + row.boss_mm / 2, bore + line)
     count = max(4, len(spread(0.0, 2 * pi * circle, PITCH_SPARE_MM)) - 1)
     places = tuple(
         (
@@ -208,7 +215,7 @@ def bin_ring(*, body: Body, joint: Joint, fastener: str, lid_thickness_mm: float
     )
     return BinRing(
         bore_mm=body.dust_outlet_diameter_mm,
-        outer_radius_mm=socket + row.boss_mm,
+        outer_radius_mm=circle + row.boss_mm / 2,
         thickness_mm=lid_thickness_mm,
         screws=screws(fastener, places),
     )

@@ -9,7 +9,7 @@ from gyrecut.catalogue import fasteners
 from gyrecut.proportions.dimensions import Screws
 
 if TYPE_CHECKING:
-    from gyrecut.proportions.dimensions import Point
+    from gyrecut.proportions.dimensions import Groove, Point
 
 MM = 1000.0
 INSERT_HOLE_SPARE_MM = 1.0  # melt collects under the insert: common practice, no source
@@ -41,6 +41,28 @@ def screws(name: str, places_mm: tuple[Point, ...]) -> Screws:
         boss_mm=row.boss_diameter * MM,
         places_mm=places_mm,
     )
+
+
+def screw_line(row: Screws, *, wall_mm: float, grooves: tuple[Groove | None, ...]) -> float:
+    """Distance of the screws from the air's edge: clear of wall and groove, the nearest there is.
+
+    Parameters
+    ----------
+    row : Screws
+        The screws.
+    wall_mm : float
+        Wall between the air and what is outside of it [mm].
+    grooves : tuple of Groove or None
+        Of the joints that share the line.
+
+    Returns
+    -------
+    float
+        From the air's edge to the middle of the screws [mm].
+    """
+    plain = wall_mm + row.boss_mm / 2
+    grooved = (groove.clear_mm + row.insert_hole_mm / 2 for groove in grooves if groove is not None)
+    return max((plain, *grooved))
 
 
 def spread(first: float, last: float, pitch: float) -> tuple[float, ...]:

@@ -10,7 +10,7 @@ from gyrecut.proportions.dimensions import Cuff, Portal, Transition
 from gyrecut.proportions.fasteners import PITCH_SPARE_MM, screws, spread
 
 if TYPE_CHECKING:
-    from gyrecut.proportions.dimensions import Body, Point, Slot
+    from gyrecut.proportions.dimensions import Body, Groove, Point, Slot
 
 TOOL_SPARE_MM = 1.0  # room round a screw head for the driver: common practice, no source
 DIFFUSER_TARGET = radians(15.0)  # included angle above which the stream separates, ASHRAE practice
@@ -89,6 +89,8 @@ def portal(
     slope: float,
     bridge_limit_mm: float,
     edge_mm: float,
+    line_mm: float,
+    groove: Groove | None,
 ) -> Portal:
     """Proportion the framed mouth in front of the slot.
 
@@ -111,6 +113,10 @@ def portal(
         Longest bridge the printer makes [mm]; the gable's flat peak uses most of it.
     edge_mm : float
         Thickness left where the slot's inner wall ends at the barrel's bore [mm].
+    line_mm : float
+        From the air's edge to the screws [mm].
+    groove : Groove or None
+        Round the mouth: the lintel is high enough for it.
 
     Returns
     -------
@@ -123,7 +129,8 @@ def portal(
     """
     a, b, radius, wall = slot.height_mm, slot.width_mm, body.radius_mm, body.wall_mm
     row = screws(fastener, ())
-    lintel = max(LINTEL_LEAST_MM, 2 * wall)
+    over_groove = 0.0 if groove is None else groove.clear_mm
+    lintel = max(LINTEL_LEAST_MM, 2 * wall, over_groove)
     peak = min(0.8 * bridge_limit_mm, b / 2)
     width = _mouth_width(height=a - lintel, area=a * b, peak=peak, slope=slope)
     rise = (width - peak) / 2 / tan(slope)
@@ -138,11 +145,11 @@ def portal(
         )
     boss, head = row.boss_mm, row.head_diameter_mm
     beside = max(
-        boss / 2,
+        line_mm - wall,
         cuff.widest_radius_mm + head / 2 + TOOL_SPARE_MM - width / 2 - wall,
     )
     low_jamb, high_jamb = radius - width - wall - beside, radius + wall + beside
-    sill = -a - wall - boss / 2
+    sill = -a - line_mm
     highest = -(row.insert_depth_mm + boss / 2 + wall)
     if highest - sill < boss:
         raise UnbuildableError(

@@ -13,7 +13,7 @@ from gyrecut.correlations.geometry import (
     scaled,
 )
 from gyrecut.errors import UnbuildableError
-from gyrecut.proportions.dimensions import Body, Dimensions, Joint, Slot
+from gyrecut.proportions.dimensions import Body, Dimensions, Groove, Joint, Seals, Slot
 from gyrecut.proportions.division import divide
 from gyrecut.proportions.ends import (
     bell_mouth,
@@ -24,7 +24,7 @@ from gyrecut.proportions.ends import (
     rim,
     rim_radius,
 )
-from gyrecut.proportions.fasteners import MM
+from gyrecut.proportions.fasteners import MM, screw_line, screws
 from gyrecut.proportions.inlet import hose_cuff, portal, transition
 from gyrecut.proportions.printing import bed_of, smallest_wall_mm
 
@@ -36,6 +36,9 @@ if TYPE_CHECKING:
     from gyrecut.proportions.dimensions import BellMouth, Cuff, Finder, OutletCuff
 
 SLOPE_SPARE = radians(1.0)  # facets of a mesh lean a little more than the surface they stand for
+LAND_MM, LAND_SPARE = 1.2, 1.1  # plastic left outside a groove, of the smallest wall at least
+CORD_SQUEEZE = 0.25  # of the cord, face seal: O-ring makers' guides, 20 to 30 %
+CORD_WIDTH = 1.35  # groove over cord, filled to 78 % when closed: same guides
 EDGE_SHARE = 0.75  # of the wall is left at the slot's inner edge
 SMALLEST_BODY_MM, LARGEST_BODY_MM = 40.0, 900.0
 SLOWEST_COVERED, FASTEST_COVERED = 1.0, 60.0  # m/s in the slot
@@ -219,20 +222,24 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         wall_mm=wall,
         slope=slope,
     )
+    seals = _seals(profile, wall, smallest_wall_mm(printer))
+    line = screw_line(screws(fastener, ()), wall_mm=wall, grooves=(seals.lid, seals.transition))
     mouth = portal(
         body=body,
         slot=slot,
-        rim_radius_mm=rim_radius(body, fastener),
+        rim_radius_mm=rim_radius(body, fastener, line),
         cuff=cuff,
         fastener=fastener,
         slope=slope,
         bridge_limit_mm=printer.bridge_limit * MM,
         edge_mm=max(EDGE_SHARE * wall, smallest_wall_mm(printer)),
+        line_mm=line,
+        groove=seals.transition,
     )
     division = divide(
         body=body,
         portal=mouth,
-        rim_radius_mm=rim_radius(body, fastener),
+        rim_radius_mm=rim_radius(body, fastener, line),
         joint=joint,
         bed=bed,
         slope=slope,
@@ -253,6 +260,7 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
             portal=mouth,
             fastener=fastener,
             slope=slope,
+            line_mm=line,
             seams=division.seams_under_the_lid,
             lap_mm=joint.lap_mm,
         ),
@@ -262,12 +270,34 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         ),
         lid=roof,
         bin_ring=bin_ring(
-            body=body, joint=joint, fastener=fastener, lid_thickness_mm=profile.walls.lid * MM
+            body=body,
+            joint=joint,
+            fastener=fastener,
+            lid_thickness_mm=profile.walls.lid * MM,
+            groove=seals.bin_ring,
         ),
         outlet=_outlet(profile, tube, joint, slope),
         joint=joint,
+        seals=seals,
         division=division,
         slope=slope,
+    )
+
+
+def _seals(profile: Profile, wall_mm: float, smallest_mm: float) -> Seals:
+    joints = profile.joints
+    cord = joints.cord * MM
+    groove = Groove(
+        cord_mm=cord,
+        width_mm=CORD_WIDTH * cord,
+        depth_mm=(1 - CORD_SQUEEZE) * cord,
+        wall_mm=wall_mm,
+        land_mm=max(LAND_MM, LAND_SPARE * smallest_mm),
+    )
+    return Seals(
+        lid=groove if joints.lid == "cord" else None,
+        transition=groove if joints.transition == "cord" else None,
+        bin_ring=groove if joints.bin_ring == "cord" else None,
     )
 
 

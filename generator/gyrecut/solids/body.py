@@ -5,11 +5,14 @@ from __future__ import annotations
 from math import acos, atan2, hypot, pi, sqrt, tan
 from typing import TYPE_CHECKING
 
+from gyrecut.solids.grooves import cord_groove
 from gyrecut.solids.shapes import (
     block,
     common,
+    drilled,
     holes_along_x,
     joined,
+    outline,
     polar,
     prism,
     prism_along_x,
@@ -23,6 +26,7 @@ if TYPE_CHECKING:
     from cadquery.func import Solid
 
     from gyrecut.proportions.dimensions import Dimensions, Point
+    from gyrecut.solids.shapes import Arc
 
 BEYOND = 1.0  # how far a tool sticks out of what it cuts
 
@@ -41,8 +45,13 @@ def barrel(d: Dimensions) -> Solid:
     """
     radius, outer, height = d.body.radius_mm, d.body.outer_radius_mm, d.body.barrel_height_mm
     tube = revolved((radius, -height), (outer, -height), (outer, 0.0), (radius, 0.0))
-    outside = joined("barrel", tube, _rim(d), _keel(d), *_side_flanges(d))
-    return sound("barrel", without("barrel", outside, *_air_tools(d), *_insert_holes(d)))
+    outside = joined("barrel", tube, _rim(d), _inlet(d))
+    hollow = without("barrel", outside, *_air_tools(d), *_lid_groove(d))
+    rim, portal = d.rim.screws, d.portal.screws
+    with_rim = drilled("rim", hollow, _rim_holes(d), depth=rim.insert_depth_mm)
+    return sound(
+        "barrel", drilled("portal", with_rim, _portal_holes(d), depth=portal.insert_depth_mm)
+    )
 
 
 def cone(d: Dimensions) -> Solid:
@@ -70,8 +79,11 @@ def _rim(d: Dimensions) -> Solid:
     return revolved((middle, foot), (outer, foot), (edge, -thickness), (edge, 0.0), (middle, 0.0))
 
 
-def _keel(d: Dimensions) -> Solid:
-    """Duct walls and portal frame, carried by a cone that leaves the barrel at the slope."""
+def _inlet(d: Dimensions) -> Solid:
+    """Duct walls, portal frame and side flanges, on a keel that leaves the barrel at the slope.
+
+    All of it stays outside the middle of the barrel's wall: the inside needs no clearing.
+    """
     portal, body = d.portal, d.body
     middle = body.radius_mm + body.wall_mm / 2
     low_z = d.keel_bottom_mm - BEYOND
@@ -88,7 +100,7 @@ def _keel(d: Dimensions) -> Solid:
         (portal.face_x_mm, portal.frame_low_y_mm, low_z),
         (0.0, body.radius_mm - portal.mouth_width_mm, 0.0),
     )
-    solids = [frame, jamb]
+    solids = [frame, jamb, *_side_flanges(d)]
     if d.keel_is_cut:
         solids.append(_keel_foot(d))
     far = portal.farthest_radius_mm
@@ -175,46 +187,47 @@ def swirl_plan(d: Dimensions) -> tuple[Point, ...]:
     return corner, (channel_x, radius), (0.0, radius), on_bore, on_wall
 
 
-def _air_tools(d: Dimensions) -> tuple[Solid, ...]:
-    """Give what the air takes out of the barrel: inside, slot channel, mouth."""
-    body, portal, floor = d.body, d.portal, -d.slot.height_mm
-    radius = body.radius_mm
+def swirl_outline(d: Dimensions) -> tuple[Point, Point, Point, Arc, Point]:
+    """Plan of barrel and slot channel, for `prism` and `outline`."""
     corner, start, tangent, on_bore, on_wall = swirl_plan(d)
     # clockwise from the tangent point, the long way round to the slot's inner edge
     end_angle = atan2(on_bore[1], on_bore[0]) % (2 * pi)
     half_way = (pi / 2 + end_angle - 2 * pi) / 2
-    swirl = prism(
-        corner,
-        start,
-        tangent,
-        (polar(radius, half_way), on_bore),
-        on_wall,
-        bottom=floor,
-        top=BEYOND,
-    )
-    below = revolved(
-        (0.0, -body.total_height_mm),
-        (body.dust_outlet_diameter_mm / 2, -body.total_height_mm),
-        (radius, -body.barrel_height_mm),
-        (radius, floor),
-        (0.0, floor),
-    )
+    return corner, start, tangent, (polar(d.body.radius_mm, half_way), on_bore), on_wall
+
+
+def _air_tools(d: Dimensions) -> tuple[Solid, ...]:
+    """Give what the air takes out of inlet and wall: slot channel with the barrel, and mouth."""
+    body, portal, floor = d.body, d.portal, -d.slot.height_mm
+    radius = body.radius_mm
+    swirl = prism(*swirl_outline(d), bottom=floor, top=BEYOND)
     mouth = prism_along_x(
         *portal.mouth_outline(radius),
         start=portal.face_x_mm - BEYOND,
         end=portal.face_x_mm + portal.depth_mm,
     )
-    return swirl, below, mouth
+    return swirl, mouth
 
 
-def _insert_holes(d: Dimensions) -> tuple[Solid, ...]:
-    rim, portal = d.rim.screws, d.portal.screws
+def _lid_groove(d: Dimensions) -> tuple[Solid, ...]:
+    """Groove in the rim for the lid's cord; it runs round barrel and slot, over the lintel."""
+    if d.seals.lid is None:
+        return ()
     return (
-        *upright_holes(rim.places_mm, rim.insert_hole_mm, bottom=-rim.insert_depth_mm, top=BEYOND),
-        *holes_along_x(
-            portal.places_mm,
-            portal.insert_hole_mm,
-            start=d.portal.face_x_mm - BEYOND,
-            end=d.portal.face_x_mm + portal.insert_depth_mm,
-        ),
+        cord_groove(outline(*swirl_outline(d), z=0.0), d.seals.lid, face_mm=0.0, opens_up=True),
+    )
+
+
+def _rim_holes(d: Dimensions) -> list[Solid]:
+    rim = d.rim.screws
+    return upright_holes(rim.places_mm, rim.insert_hole_mm, bottom=-rim.insert_depth_mm, top=BEYOND)
+
+
+def _portal_holes(d: Dimensions) -> list[Solid]:
+    portal = d.portal.screws
+    return holes_along_x(
+        portal.places_mm,
+        portal.insert_hole_mm,
+        start=d.portal.face_x_mm - BEYOND,
+        end=d.portal.face_x_mm + portal.insert_depth_mm,
     )

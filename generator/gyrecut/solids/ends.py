@@ -5,9 +5,12 @@ from __future__ import annotations
 from math import cos, pi, sin
 from typing import TYPE_CHECKING
 
+from cadquery import func
+
 from gyrecut.proportions.dimensions import BellMouth
 from gyrecut.solids.cuff import cuff_inside, cuff_outside
-from gyrecut.solids.shapes import joined, revolved, sound, upright_holes, without
+from gyrecut.solids.grooves import cord_groove
+from gyrecut.solids.shapes import drilled, joined, revolved, sound, upright_holes, without
 from gyrecut.solids.sockets import collar
 
 if TYPE_CHECKING:
@@ -35,19 +38,20 @@ def bin_ring(d: Dimensions) -> Solid:
     bore, edge, bottom = ring.bore_mm / 2, ring.outer_radius_mm, seat - ring.thickness_mm
     plate = revolved((bore, bottom), (edge, bottom), (edge, seat), (bore, seat))
     screws = ring.screws
-    return sound(
-        "bin ring",
-        without(
-            "bin ring",
-            joined("bin ring", plate, collar(d.body, d.joint, seat, gusset=None)),
-            *upright_holes(
-                screws.places_mm,
-                screws.clearance_hole_mm,
-                bottom=bottom - BEYOND,
-                top=seat + BEYOND,
-            ),
-        ),
+    whole = joined("bin ring", plate, collar(d.body, d.joint, seat, gusset=None))
+    holes = upright_holes(
+        screws.places_mm, screws.clearance_hole_mm, bottom=bottom - BEYOND, top=seat + BEYOND
     )
+    with_holes = drilled("bin ring", whole, holes, depth=ring.thickness_mm)
+    return sound("bin ring", without("bin ring", with_holes, *_bin_groove(d, bottom)))
+
+
+def _bin_groove(d: Dimensions, face: float) -> tuple[Solid, ...]:
+    """Groove in the ring's underside for the cord on the bin's lid."""
+    if d.seals.bin_ring is None:
+        return ()
+    bore = func.wire(func.circle(d.bin_ring.bore_mm / 2))
+    return (cord_groove(bore, d.seals.bin_ring, face_mm=face, opens_up=False),)
 
 
 def outlet(d: Dimensions) -> Solid:

@@ -7,7 +7,16 @@ from typing import TYPE_CHECKING
 
 from cadquery.func import Solid, Vector, clean
 
-from gyrecut.solids.shapes import block, joined, one_solid, revolved, sound, upright_holes, without
+from gyrecut.solids.shapes import (
+    block,
+    drilled,
+    joined,
+    one_solid,
+    revolved,
+    sound,
+    upright_holes,
+    without,
+)
 
 if TYPE_CHECKING:
     from gyrecut.proportions.dimensions import Dimensions
@@ -35,15 +44,10 @@ def lid(d: Dimensions) -> Solid:
     )
     plate = one_solid(clean(joined("lid", disc, tab)), "lid")
     hole = Solid.makeCylinder(d.lid.finder_hole_mm / 2, top + 2 * BEYOND, Vector(0, 0, -BEYOND))
-    drilled = without(
-        "lid",
-        plate,
-        hole,
-        *upright_holes(
-            screws.places_mm, screws.clearance_hole_mm, bottom=-BEYOND, top=top + BEYOND
-        ),
+    holes = upright_holes(
+        screws.places_mm, screws.clearance_hole_mm, bottom=-BEYOND, top=top + BEYOND
     )
-    return sound("lid", drilled)
+    return sound("lid", drilled("lid", without("lid", plate, hole), holes, depth=top))
 
 
 def finder(d: Dimensions) -> Solid:

@@ -10,7 +10,7 @@ from math import cos, degrees, pi, sin
 from typing import TYPE_CHECKING
 
 from cadquery import func
-from cadquery.func import Edge, Shape, Solid, Vector
+from cadquery.func import Edge, Shape, Solid, Vector, Wire
 
 from gyrecut.errors import BuildError
 
@@ -22,6 +22,7 @@ if TYPE_CHECKING:
     Arc = tuple[Point, Point]  # a point on the way, and the end
 
 LEAST_CHANGE_MM3 = 1e-6
+HOLE_TOLERANCE = 1e-6
 
 
 def revolved(
@@ -46,21 +47,24 @@ def revolved(
     -------
     Solid
     """
-    outline = func.face(
+    section = func.face(
         func.wire(*_edges(start, steps, lambda point: Vector(point[0], 0, point[1])))
     )
-    turned = func.revolve(outline, (0, 0, 0), (0, 0, 1), degrees(last - first))
+    turned = func.revolve(section, (0, 0, 0), (0, 0, 1), degrees(last - first))
     if first:
         turned = turned.moved(rz=degrees(first))
     return one_solid(turned, "a turned outline")
 
 
+def outline(start: Point, *steps: Point | Arc, z: float) -> Wire:
+    """Give a closed outline in (x, y) as a wire at the height `z`."""
+    return func.wire(*_edges(start, steps, lambda point: Vector(point[0], point[1], z)))
+
+
 def prism(start: Point, *steps: Point | Arc, bottom: float, top: float) -> Solid:
     """Extrude a closed outline in (x, y) from z = `bottom` to z = `top`."""
-    outline = func.face(
-        func.wire(*_edges(start, steps, lambda point: Vector(point[0], point[1], bottom)))
-    )
-    return one_solid(func.extrude(outline, (0, 0, top - bottom)), "a prism")
+    base = func.face(outline(start, *steps, z=bottom))
+    return one_solid(func.extrude(base, (0, 0, top - bottom)), "a prism")
 
 
 def prism_along_x(*corners: Point, start: float, end: float) -> Solid:
@@ -109,11 +113,27 @@ def joined(what: str, first: Shape, *others: Shape) -> Solid:
 
 
 def without(what: str, body: Shape, *tools: Shape) -> Solid:
-    """Cut tools out of a body; every tool has to take something away."""
-    left = one_solid(body.cut(*tools), what)
+    """Cut tools out of a body, one after the other: every one has to take something away."""
+    left = one_solid(body, what)
+    for tool in tools:
+        before = left.Volume()
+        left = one_solid(func.cut(left, tool), what)
+        if before - left.Volume() < LEAST_CHANGE_MM3:
+            raise BuildError(f"{what}: a cut took nothing away")
+    return left
+
+
+def drilled(what: str, body: Solid, holes: Sequence[Solid], *, depth: float) -> Solid:
+    """Drill equal holes in one cut; each has to take a full cylinder of `depth` away."""
+    if not holes:
+        return body
+    left = one_solid(body.cut(*holes), what)
     taken = body.Volume() - left.Volume()
-    if taken < LEAST_CHANGE_MM3:
-        raise BuildError(f"{what}: a cut took nothing away")
+    box = holes[0].BoundingBox()
+    diameter = min(box.xlen, box.ylen, box.zlen)
+    wanted = len(holes) * pi / 4 * diameter**2 * depth
+    if abs(taken - wanted) > HOLE_TOLERANCE * wanted:
+        raise BuildError(f"{what}: {len(holes)} holes took {taken:.1f} mm3, not {wanted:.1f}")
     return left
 
 

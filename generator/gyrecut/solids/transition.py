@@ -14,8 +14,18 @@ from cadquery.func import Location, Plane, Solid
 
 from gyrecut.proportions.inlet import longest_run, mouth_centre
 from gyrecut.solids.cuff import cuff_inside, cuff_outside
+from gyrecut.solids.grooves import cord_groove
 from gyrecut.solids.loft import loft_to_circle
-from gyrecut.solids.shapes import block, joined, revolved, sound, upright_holes, without
+from gyrecut.solids.shapes import (
+    block,
+    drilled,
+    joined,
+    outline,
+    revolved,
+    sound,
+    upright_holes,
+    without,
+)
 
 if TYPE_CHECKING:
     from gyrecut.proportions.dimensions import Dimensions, Point
@@ -50,20 +60,20 @@ def transition(d: Dimensions) -> Solid:
     outside = joined("transition", flange, loft_to_circle(outer, widest, t.length_mm), cuff)
     screws = portal.screws
     places = _local(screws.places_mm, centre)
-    return sound(
-        "transition",
-        without(
-            "transition",
-            outside,
-            loft_to_circle(inner, bore, t.length_mm),
-            *upright_holes(
-                places,
-                screws.clearance_hole_mm,
-                bottom=-BEYOND,
-                top=t.flange_thickness_mm + BEYOND,
-            ),
-        ),
+    hollow = without(
+        "transition", outside, loft_to_circle(inner, bore, t.length_mm), *_groove(d, inner)
     )
+    holes = upright_holes(
+        places, screws.clearance_hole_mm, bottom=-BEYOND, top=t.flange_thickness_mm + BEYOND
+    )
+    return sound("transition", drilled("transition", hollow, holes, depth=t.flange_thickness_mm))
+
+
+def _groove(d: Dimensions, mouth: tuple[Point, ...]) -> tuple[Solid, ...]:
+    """Groove in the flange's face for the cord round the mouth; it prints as a short bridge."""
+    if d.seals.transition is None:
+        return ()
+    return (cord_groove(outline(*mouth, z=0.0), d.seals.transition, face_mm=0.0, opens_up=False),)
 
 
 def transition_place(d: Dimensions) -> Location:
