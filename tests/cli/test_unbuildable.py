@@ -19,7 +19,7 @@ which stays whole
   51 |   build_volume: [70 mm, 70 mm, 70 mm]      # width, depth, height
      |   ^^^^^^^^^^^^
   given: 65 mm of height
-  allowed: at least 98 mm
+  allowed: at least 100 mm
   do: choose a smaller body, a family with a lower slot, or a taller printer
 """,
     ),
@@ -31,7 +31,7 @@ gyrecut: shop.yaml:51:3: P090 printer.build_volume is too small for any sector o
   51 |   build_volume: [90 mm, 90 mm, 250 mm]      # width, depth, height
      |   ^^^^^^^^^^^^
   given: a bed that leaves 80 x 80 mm
-  allowed: room for a piece that reaches 121 mm from the axis, 79 degrees of it (slot and portal) \
+  allowed: room for a piece that reaches 125 mm from the axis, 82 degrees of it (slot and portal) \
 in one piece
   do: choose a smaller body, or a larger printer
 """,

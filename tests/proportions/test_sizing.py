@@ -146,7 +146,7 @@ def test_measured_hose_wins_over_its_name(luthier: Profile) -> None:
 
 
 def test_a_low_printer_shortens_the_transition(luthier: Profile) -> None:
-    low = with_printer(luthier, build_volume=(0.22, 0.22, 0.16))
+    low = with_printer(luthier, build_volume=(0.22, 0.22, 0.14))
     assert dimensions_of(low).transition.length_mm < dimensions_of(luthier).transition.length_mm
     assert dimensions_of(low).transition.included_angle > (
         dimensions_of(luthier).transition.included_angle

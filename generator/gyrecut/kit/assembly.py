@@ -48,16 +48,17 @@ def hardware(d: Dimensions, fastener: Fastener, *, copies: int) -> Iterator[Hard
         quantity=str(in_lid + in_portal),
         where="rim and portal of the body",
     )
+    in_rim = _screw_into_insert(d.lid.thickness_mm, lid.insert_depth_mm, d.seals.lid)
     yield Hardware(
-        what=f"{lid.thread} x {_screw_into_insert(d.lid.thickness_mm, lid.insert_depth_mm, d.seals.lid)} screw "
-        "and washer",
+        what=f"{lid.thread} x {in_rim} screw and washer",
         quantity=str(in_lid),
         where="lid",
     )
-    flange = d.transition.flange_thickness_mm
+    in_frame = _screw_into_insert(
+        d.transition.flange_thickness_mm, portal.insert_depth_mm, d.seals.transition
+    )
     yield Hardware(
-        what=f"{portal.thread} x {_screw_into_insert(flange, portal.insert_depth_mm, d.seals.transition)} screw "
-        "and washer",
+        what=f"{portal.thread} x {in_frame} screw and washer",
         quantity=str(in_portal),
         where="transition",
     )

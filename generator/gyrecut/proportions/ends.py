@@ -111,15 +111,17 @@ def _clear_of_seams(
     return angles
 
 
-def finder(*, body: Body, bore_mm: float, length_mm: float, stub_mm: float) -> Finder:
-    """Proportion the vortex finder and the collar it hangs by."""
+def finder(
+    *, body: Body, bore_mm: float, length_mm: float, stub_mm: float, edge_mm: float
+) -> Finder:
+    """Proportion the vortex finder and the collar it hangs by, whose edge takes its name."""
     outer = bore_mm / 2 + body.wall_mm
     return Finder(
         bore_mm=bore_mm,
         length_mm=length_mm,
         wall_mm=body.wall_mm,
         collar_radius_mm=outer + COLLAR_MM,
-        collar_thickness_mm=max(RIM_LEAST_MM, 1.5 * body.wall_mm),
+        collar_thickness_mm=max(RIM_LEAST_MM, 1.5 * body.wall_mm, edge_mm),
         stub_mm=stub_mm,
     )
 
@@ -146,7 +148,9 @@ def outlet_cuff(*, finder: Finder, cuff: Cuff, joint: Joint, slope: float) -> Ou
     )
 
 
-def bell_mouth(*, finder: Finder, throat_mm: float, joint: Joint) -> BellMouth:
+def bell_mouth(
+    *, finder: Finder, throat_mm: float, joint: Joint, edge_mm: float
+) -> BellMouth:
     """Proportion the rounded intake of a blower that stands on the finder.
 
     Parameters
@@ -157,6 +161,8 @@ def bell_mouth(*, finder: Finder, throat_mm: float, joint: Joint) -> BellMouth:
         The blower's intake [mm].
     joint : Joint
         Gap of the plug.
+    edge_mm : float
+        Least thickness of the stop, whose edge takes the piece's name [mm].
 
     Returns
     -------
@@ -188,7 +194,7 @@ def bell_mouth(*, finder: Finder, throat_mm: float, joint: Joint) -> BellMouth:
         plug_radius_mm=plug,
         plug_length_mm=finder.stub_mm,
         stop_radius_mm=finder.outer_radius_mm,
-        stop_thickness_mm=max(RIM_LEAST_MM, finder.wall_mm),
+        stop_thickness_mm=max(RIM_LEAST_MM, finder.wall_mm, edge_mm),
         spigot_length_mm=max(12.0, SPIGOT_REACH * throat_mm),
         wall_mm=finder.wall_mm,
     )

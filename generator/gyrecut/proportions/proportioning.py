@@ -26,7 +26,7 @@ from gyrecut.proportions.ends import (
 )
 from gyrecut.proportions.fasteners import MM, screw_line, screws
 from gyrecut.proportions.inlet import hose_cuff, portal, transition
-from gyrecut.proportions.printing import bed_of, smallest_wall_mm
+from gyrecut.proportions.printing import bed_of, name_band_mm, smallest_wall_mm
 
 if TYPE_CHECKING:
     from gyrecut.airflow.air import AirState
@@ -249,6 +249,7 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         bore_mm=_times(shape.finder_diameter, diameter_mm),
         length_mm=_times(shape.finder_length, diameter_mm),
         stub_mm=joint.lap_mm,
+        edge_mm=name_band_mm(printer),
     )
     roof = lid(thickness_mm=profile.walls.lid * MM, finder=tube, joint=joint)
     return Dimensions(
@@ -309,7 +310,12 @@ def _times(ratio: Numbers, diameter_mm: float) -> float:
 def _outlet(profile: Profile, tube: Finder, joint: Joint, slope: float) -> OutletCuff | BellMouth:
     outlet = profile.outlet
     if outlet.kind == "blower":
-        return bell_mouth(finder=tube, throat_mm=outlet.intake_diameter * MM, joint=joint)
+        return bell_mouth(
+            finder=tube,
+            throat_mm=outlet.intake_diameter * MM,
+            joint=joint,
+            edge_mm=name_band_mm(profile.printer),
+        )
     cuff: Cuff = hose_cuff(
         nominal_mm=hoses()[outlet.hose].nominal * MM,
         measured_mm=None if outlet.measured is None else outlet.measured * MM,
