@@ -142,6 +142,11 @@ class Groove:
     land_mm: float
 
     @property
+    def turn_mm(self) -> float:
+        """Radius the cord takes where its way turns outwards: three cords, common practice."""
+        return 3 * self.cord_mm
+
+    @property
     def outer_mm(self) -> float:
         """From the air's edge to the groove's outer edge."""
         return self.wall_mm + self.width_mm

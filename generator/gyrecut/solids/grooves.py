@@ -43,15 +43,18 @@ def cord_groove(opening: Wire, groove: Groove, *, face_mm: float, opens_up: bool
         Where the offset edges are no closed rings.
     """
     away = -1.0 if opens_up else 1.0
-    inner, outer = (_around(opening, distance) for distance in (groove.wall_mm, groove.outer_mm))
+    inner = _around(opening, groove.wall_mm, groove.turn_mm + groove.width_mm / 2)
+    outer = _around(opening, groove.outer_mm, groove.turn_mm - groove.width_mm / 2)
     band = func.face(outer, inner).moved(z=face_mm - away * BEYOND)
     return one_solid(
         func.extrude(band, (0.0, 0.0, away * (groove.depth_mm + BEYOND))), "cord groove"
     )
 
 
-def _around(opening: Wire, distance: float) -> Wire:
-    (ring,) = func.offset2D(opening, distance).Wires()
+def _around(opening: Wire, distance: float, turn: float) -> Wire:
+    """Edge at a distance round the opening; where it turns outwards, with at least that radius."""
+    (far,) = func.offset2D(opening, distance + turn).Wires()
+    (ring,) = func.offset2D(far, -turn).Wires()
     if not ring.IsClosed():
         raise BuildError("cord groove: its edge does not close")
     return ring
