@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import json
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from math import pi
 from typing import TYPE_CHECKING, Any
 
@@ -265,17 +265,29 @@ def build(design: Design, folder: Path, progress: Progress) -> BuildResult:
     BuildError
         Where the kernel or a file does not give what the design asks for.
     """
-    from gyrecut.checks import findings_of, limits_of, measure_mesh  # noqa: PLC0415 - CAD and meshes load here
+    from gyrecut.checks import (  # noqa: PLC0415 - CAD and meshes load here
+        estimate_for,
+        findings_of,
+        limits_of,
+        measure_mesh,
+        settings_of,
+    )
     from gyrecut.kit.writing import write_kit  # noqa: PLC0415 - same
 
     pieces = tuple(_pieces(design, progress))
     limits = limits_of(design.profile.printer)
     findings = list(design.findings)
+    polymer = polymers()[design.profile.material]
+    settings = settings_of(design.profile.printer, polymer)
+    measured: list[KitPiece] = []
     for done, piece in enumerate(pieces, start=1):
-        findings += findings_of(measure_mesh(piece.mesh, limits), piece.name, limits)
+        measures = measure_mesh(piece.mesh, limits)
+        findings += findings_of(measures, piece.name, limits)
+        estimate = estimate_for(measures, settings=settings, density=polymer.density)
+        measured.append(replace(piece, printing=estimate))
         progress("checks", done, len(pieces))
     progress("files", 0, 1)
-    written = write_kit(_contents(design, pieces, tuple(findings)), folder)
+    written = write_kit(_contents(design, tuple(measured), tuple(findings)), folder)
     progress("files", 1, 1)
     manifest: dict[str, Any] = json.loads((written / MANIFEST).read_bytes())
     return BuildResult(folder=written, findings=tuple(findings), manifest=manifest)

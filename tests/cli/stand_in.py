@@ -30,8 +30,13 @@ if TYPE_CHECKING:
 BARREL = {"name": "barrel-1", "title": "Barrel, first slice", "copies": 2}
 LID = {"name": "lid", "title": "Lid", "copies": 1}
 PIECES = [
-    {**BARREL, "size_mm": [150.0, 151.5, 90.25], "mass_g": 210.0},
-    {**LID, "size_mm": [170.0, 170.0, 6.0], "mass_g": 80.0},
+    {
+        **BARREL,
+        "size_mm": [150.0, 151.5, 90.25],
+        "mass_g": 210.0,
+        "printing": {"duration_s": 36000.0},
+    },
+    {**LID, "size_mm": [170.0, 170.0, 6.0], "mass_g": 80.0, "printing": None},
 ]
 STOP = Finding(
     code="invented-stop",

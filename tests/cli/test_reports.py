@@ -161,7 +161,7 @@ def test_build_ends_with_the_kit_its_pieces_and_the_cautions(run: Run, profile: 
     assert text.startswith("The kit of luthier-sander is in kits/one\n")
     rows = [" ".join(line.split()) for line in text.splitlines()]
     assert "Pieces: 3 prints, 0.500 kg of PETG" in rows
-    assert "barrel-1 Barrel, first slice 2 150.0 x 151.5 x 90.2 210" in rows
+    assert "barrel-1 Barrel, first slice 2 150.0 x 151.5 x 90.2 210 10" in rows
     assert "lid Lid 1 170.0 x 170.0 x 6.0 80.0" in rows
     flat = " ".join(rows)
     for caution in cautions(**COMPACT_ALL):  # type: ignore[arg-type]

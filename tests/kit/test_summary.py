@@ -69,7 +69,7 @@ def test_estimate_is_called_one_and_says_what_to_do_with_it(contents: KitContent
 def test_pieces_are_listed_with_copies_sizes_and_masses(contents: KitContents) -> None:
     text = summary_text(contents)
     # 50 x 50 x 6 mm at 1270 kg/m3 is 19.05 g
-    assert "| Plate | `pieces/plate.stl` | 3 | 50.0 x 50.0 x 6.0 | 19 |" in text
+    assert "| Plate | `pieces/plate.stl` | 3 | 50.0 x 50.0 x 6.0 | 19 |  |  |" in text
     assert "In all 5 prints, " in text
     mass = sum(piece.copies * piece.mass_g for piece in contents.pieces) / 1000
     assert f"{mass:.2f} kg of PETG" in text

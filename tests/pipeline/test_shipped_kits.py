@@ -210,6 +210,19 @@ def test_summary_says_what_to_do(kit: Built) -> None:
     assert "## What to expect" in text
 
 
+def test_every_piece_says_what_it_takes_to_print(kit: Built) -> None:
+    for piece in kit.pieces:
+        printing = piece["printing"]
+        # shells and infill weigh less than the full piece, and every layer takes some time
+        assert 0 < printing["mass_g"] <= piece["mass_g"] * 1.001
+        layers = piece["size_mm"][2] / (kit.profile.printer.layer_height * 1000)
+        assert printing["layers"] == pytest.approx(layers, abs=1.5)
+        assert printing["duration_s"] > printing["layers"]
+    text = (kit.folder / "summary.md").read_text()
+    hours = sum(p["copies"] * p["printing"]["duration_s"] for p in kit.pieces) / 3600
+    assert f"and {hours:.0f} h" in text
+
+
 def test_progress_is_told_to_the_end(kit: Built) -> None:
     last = {stage: (done, total) for stage, done, total in kit.told}
     assert list(last) == ["solids", "pieces", "checks", "files"]

@@ -10,6 +10,7 @@ from gyrecut.checks.measures import (
     PieceMeasures,
     SolidMeasures,
     check_mesh,
+    estimate_for,
     findings_of,
     measure_mesh,
 )
@@ -42,6 +43,7 @@ __all__ = [
     "Stance",
     "Thickness",
     "check_mesh",
+    "estimate_for",
     "findings_of",
     "limits_of",
     "measure_mesh",

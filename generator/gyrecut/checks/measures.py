@@ -15,6 +15,12 @@ from gyrecut.checks.features import Features, feature_findings, measure_features
 from gyrecut.checks.fit import fit_findings
 from gyrecut.checks.opposed import opposed
 from gyrecut.checks.overhang import Overhang, measure_overhang, overhang_findings
+from gyrecut.checks.print_estimate import (
+    FilamentSettings,
+    PrintEstimate,
+    ResinSettings,
+    print_estimate,
+)
 from gyrecut.checks.rays import RayCaster
 from gyrecut.checks.sampling import spread_samples
 from gyrecut.checks.surface import surface_of
@@ -149,3 +155,20 @@ def findings_of(measures: PieceMeasures, piece: str, limits: PrintLimits) -> tup
 def check_mesh(mesh: trimesh.Trimesh, piece_name: str, limits: PrintLimits) -> tuple[Finding, ...]:
     """Measure one piece and say what is wrong with it."""
     return findings_of(measure_mesh(mesh, limits), piece_name, limits)
+
+
+def estimate_for(
+    measures: PieceMeasures, *, settings: FilamentSettings | ResinSettings, density: float
+) -> PrintEstimate | None:
+    """Estimate what a measured piece takes to print; None where it is no closed body."""
+    solid = measures.solid
+    if solid is None:
+        return None
+    return print_estimate(
+        volume_mm3=solid.volume_mm3,
+        area_mm2=solid.area_mm2,
+        level_mm2=solid.level_mm2,
+        height_mm=solid.size_mm[2],
+        settings=settings,
+        density=density,
+    )

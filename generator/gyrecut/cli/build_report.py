@@ -38,7 +38,7 @@ def show_kit(design: Design, result: BuildResult, stream: TextIO) -> None:
     out.print("Read summary.md there first; kit.3mf holds every piece, pieces/ each one alone.\n")
     print_table(
         out,
-        ("piece", "what it is", "#copies", "#size mm", "#g each"),
+        ("piece", "what it is", "#copies", "#size mm", "#g full", "#about h"),
         map(_cells, pieces),
         title=f"Pieces: {prints} prints, {_kilograms(pieces)} kg of {design.profile.material}",
     )
@@ -50,8 +50,9 @@ def show_kit(design: Design, result: BuildResult, stream: TextIO) -> None:
 
 def _cells(piece: Mapping[str, Any]) -> tuple[str, ...]:
     size = " x ".join(map(tenths, piece["size_mm"]))
-    grams = figure(piece["mass_g"])
-    return piece["name"], piece["title"], str(piece["copies"]), size, grams
+    grams, printing = figure(piece["mass_g"]), piece["printing"]
+    hours = "" if printing is None else figure(printing["duration_s"] / 3600, 2)
+    return piece["name"], piece["title"], str(piece["copies"]), size, grams, hours
 
 
 def _kilograms(pieces: Iterable[Mapping[str, Any]]) -> str:

@@ -79,14 +79,13 @@ def hardware(d: Dimensions, fastener: Fastener, *, copies: int) -> Iterator[Hard
 def _seals(d: Dimensions, copies: int) -> Iterator[Hardware]:
     """List cord by its length and foam by its area, for the joints that take them."""
     joints = _sealed_joints(d)
-    cords = [joint for joint in joints if joint.groove is not None]
+    cords = [(joint, joint.groove) for joint in joints if joint.groove is not None]
     if cords:
-        groove = cords[0].groove
-        length = sum(joint.edge_mm + 2 * pi * groove.middle_mm for joint in cords)
+        length = sum(joint.edge_mm + 2 * pi * groove.middle_mm for joint, groove in cords)
         yield Hardware(
-            what=f"soft round cord {groove.cord_mm:g} mm, ends cut square and glued",
+            what=f"soft round cord {cords[0][1].cord_mm:g} mm, ends cut square and glued",
             quantity=f"{CORD_SPARE * length * copies / 1000:.2f} m",
-            where=", ".join(joint.where for joint in cords),
+            where=", ".join(joint.where for joint, _ in cords),
         )
     foamed = [joint for joint in joints if joint.groove is None]
     if foamed:

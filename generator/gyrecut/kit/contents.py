@@ -9,6 +9,7 @@ if TYPE_CHECKING:
     from cadquery import Solid
     from trimesh import Trimesh
 
+    from gyrecut.checks import PrintEstimate
     from gyrecut.findings import Finding
 
 
@@ -38,6 +39,8 @@ class KitPiece:
         Volume of the solid, not of its mesh [mm^3].
     mass_g : float
         One copy printed full [g].
+    printing : PrintEstimate or None
+        What one copy takes to print with shells and infill; None before it is measured.
     geometry_hash : str
         Equal for equal posed geometry, see `gyrecut.kit.geometry_hash`.
     """
@@ -53,6 +56,7 @@ class KitPiece:
     volume_mm3: float
     mass_g: float
     geometry_hash: str
+    printing: PrintEstimate | None = None
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

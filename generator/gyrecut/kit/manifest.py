@@ -142,6 +142,7 @@ def _piece(piece: KitPiece) -> dict[str, object]:
         "size_mm": [round(extent, 3) for extent in piece.size_mm],
         "volume_mm3": round(piece.volume_mm3, 3),
         "mass_g": round(piece.mass_g, 3),
+        "printing": plain(piece.printing),
         "files": piece_files(piece.name),
         "geometry_hash": piece.geometry_hash,
     }

@@ -12,9 +12,10 @@ if TYPE_CHECKING:
     from collections.abc import Iterable, Iterator, Sequence
 
     from gyrecut.findings import Finding
-    from gyrecut.kit.contents import Fact, KitContents
+    from gyrecut.kit.contents import Fact, KitContents, KitPiece
 
 GRAMS_PER_KILOGRAM = 1000
+SECONDS_PER_HOUR = 3600
 PLAIN_FROM = 1e4  # from here four digits would need an exponent
 
 
@@ -93,19 +94,37 @@ def _pieces(contents: KitContents) -> str:
             str(piece.copies),
             " x ".join(f"{extent:.1f}" for extent in piece.size_mm),
             f"{piece.mass_g:.0f}",
+            *_printing(piece),
         )
         for piece in contents.pieces
     ]
     count = sum(piece.copies for piece in contents.pieces)
     kilograms = sum(p.copies * p.mass_g for p in contents.pieces) / GRAMS_PER_KILOGRAM
     total = "one print" if count == 1 else f"{count} prints"
-    table = _table(("piece", "file", "copies", "size mm", "g each"), rows)
+    header = ("piece", "file", "copies", "size mm", "g full", "about g", "about h")
     return (
-        f"## Pieces to print\n\n{table}\n\n"
+        f"## Pieces to print\n\n{_table(header, rows)}\n\n"
         f"In all {total}, {kilograms:.2f} kg of {contents.polymer.name} when printed full, "
-        "without brims and waste. Every file is in millimetres and already in its print pose; "
-        "`kit.3mf` holds all of them, `assembly.step` shows them in the machine."
+        f"without brims and waste{_usual(contents)}. Every file is in millimetres and already in "
+        "its print pose; `kit.3mf` holds all of them, `assembly.step` shows them in the machine."
     )
+
+
+def _printing(piece: KitPiece) -> tuple[str, str]:
+    if piece.printing is None:
+        return "", ""
+    hours = piece.printing.duration_s / SECONDS_PER_HOUR
+    return f"{piece.printing.mass_g:.0f}", f"{hours:.1f}"
+
+
+def _usual(contents: KitContents) -> str:
+    """Say what printing takes with shells and infill, where every piece has been estimated."""
+    known = [(piece.copies, piece.printing) for piece in contents.pieces if piece.printing]
+    if len(known) < len(contents.pieces):
+        return ""
+    kilograms = sum(copies * one.mass_g for copies, one in known) / GRAMS_PER_KILOGRAM
+    hours = sum(copies * one.duration_s for copies, one in known) / SECONDS_PER_HOUR
+    return f"; with shells and infill about {kilograms:.2f} kg and {hours:.0f} h"
 
 
 def _hardware(contents: KitContents) -> str:
