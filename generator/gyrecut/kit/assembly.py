@@ -181,18 +181,18 @@ def steps(d: Dimensions, *, copies: int) -> Iterator[str]:
     else:
         yield "Glue the outlet's socket over the finder's upper end."
     yield (
-        f"{_seal_of(d.seals.lid, 'the rim', 'the rim, cut out for barrel and slot')}, lay the lid "
+        f"{_seal_of(d.seals.lid, 'the rim', 'the rim, cut out for barrel and slot')}. Lay the lid "
         "on it and draw its screws up crosswise; they come from above."
     )
     yield (
-        f"{_seal_of(d.seals.transition, 'the flange', 'the portal, cut out for the mouth')} and "
-        "screw the transition to the portal; the screws stand beside the duct, a driver passes "
+        f"{_seal_of(d.seals.transition, 'the flange', 'the portal, cut out for the mouth')}. "
+        "Screw the transition to the portal; the screws stand beside the duct, a driver passes "
         "the cuff."
     )
     yield (
         f"Cut a hole of {d.bin_ring.bore_mm:.0f} mm into the bin's lid and drill it through the "
-        f"ring's holes. {_seal_of(d.seals.bin_ring, 'the ring', 'the lid')} and screw the ring "
-        "down."
+        f"ring's holes. {_seal_of(d.seals.bin_ring, 'the ring', 'the lid')}. Screw the "
+        "ring down."
     )
     yield (
         "Close hose and outlet, draw a little suction and listen at every joint; any leak at the "
