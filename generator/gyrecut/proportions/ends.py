@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from itertools import pairwise
-from math import atan2, cos, pi, radians, sin, tan
+from math import atan2, cos, dist, pi, radians, sin, tan
 from typing import TYPE_CHECKING
 
 from gyrecut.airflow.entries import entry_loss_bell_mouth
@@ -19,6 +19,8 @@ from gyrecut.proportions.dimensions import (
 from gyrecut.proportions.fasteners import PITCH_SPARE_MM, screw_line, screws, spread
 
 if TYPE_CHECKING:
+    from collections.abc import Iterable
+
     from gyrecut.proportions.dimensions import Body, Cuff, Groove, Joint, Point, Portal
 
 RIM_FLOOR_MM = 2.0  # plastic left under an insert hole
@@ -81,17 +83,23 @@ def rim(
     arc = _clear_of_seams(
         last, pi / 2, seams, pitch=PITCH_SPARE_MM / circle, clear=(boss + lap_mm) / 2 / circle
     )
-    beside = spread(0.0, lintel_x, PITCH_SPARE_MM)[1:]
-    places: tuple[Point, ...] = (
-        *((circle * cos(angle), circle * sin(angle)) for angle in arc if angle > last),
-        *((x, outer_y) for x in beside),
-        (lintel_x, inner_y),
-    )
+    beside: list[Point] = [(x, outer_y) for x in spread(0.0, lintel_x, PITCH_SPARE_MM)[1:]]
+    beside.append((lintel_x, inner_y))
+    round_barrel = [(circle * cos(angle), circle * sin(angle)) for angle in arc]
     return Rim(
         outer_radius_mm=rim_radius(body, fastener, line_mm),
         thickness_mm=max(RIM_LEAST_MM, row.insert_depth_mm + RIM_FLOOR_MM - gusset_at_hole),
-        screws=screws(fastener, places),
+        screws=screws(fastener, (*_apart(round_barrel, beside, boss), *beside)),
     )
+
+
+def _apart(places: Iterable[Point], fixed: Iterable[Point], least: float) -> list[Point]:
+    """Leave out the places nearer than `least` to a fixed one, or to one already kept."""
+    kept: list[Point] = []
+    for place in places:
+        if all(dist(place, other) >= least for other in (*kept, *fixed)):
+            kept.append(place)
+    return kept
 
 
 def _clear_of_seams(
