@@ -151,3 +151,21 @@ def test_a_low_printer_shortens_the_transition(luthier: Profile) -> None:
     assert dimensions_of(low).transition.included_angle > (
         dimensions_of(luthier).transition.included_angle
     )
+
+
+@pytest.mark.parametrize("face_down", ["transition", "bin_ring"])
+def test_a_groove_that_prints_face_down_has_to_be_bridged(luthier: Profile, face_down: str) -> None:
+    # grooves for round cord are a third wider than it, as handbooks have them: 5.4 mm here
+    with pytest.raises(UnbuildableError, match=r"joints\.cord needs a groove wider"):
+        dimensions_of(with_narrow_bridges(luthier, face_down))
+
+
+def test_a_groove_that_prints_face_up_needs_no_bridge(luthier: Profile) -> None:
+    assert dimensions_of(with_narrow_bridges(luthier, "lid")).seals.lid is not None
+
+
+def with_narrow_bridges(profile: Profile, corded: str) -> Profile:
+    gaskets = dict.fromkeys(("lid", "transition", "bin_ring"), "gasket")
+    joints = profile.joints.model_copy(update={**gaskets, corded: "cord", "cord": 0.004})
+    printer = profile.printer.model_copy(update={"bridge_limit": 0.005})
+    return profile.model_copy(update={"joints": joints, "printer": printer})

@@ -223,6 +223,7 @@ def _proportion_at(profile: Profile, shape: CycloneGeometry, diameter_mm: float)
         slope=slope,
     )
     seals = _seals(profile, wall, smallest_wall_mm(printer))
+    _groove_bridges(seals, printer.bridge_limit * MM)
     line = screw_line(screws(fastener, ()), wall_mm=wall, grooves=(seals.lid, seals.transition))
     mouth = portal(
         body=body,
@@ -300,6 +301,19 @@ def _seals(profile: Profile, wall_mm: float, smallest_mm: float) -> Seals:
         transition=groove if joints.transition == "cord" else None,
         bin_ring=groove if joints.bin_ring == "cord" else None,
     )
+
+
+def _groove_bridges(seals: Seals, bridge_limit_mm: float) -> None:
+    """Refuse a groove too wide to bridge: transition and bin ring print on their seals."""
+    for groove in (seals.transition, seals.bin_ring):
+        if groove is not None and groove.width_mm > bridge_limit_mm:
+            raise UnbuildableError(
+                key=("joints", "cord"),
+                what="needs a groove wider than the printer bridges",
+                given=f"{groove.cord_mm:g} mm, in a groove of {groove.width_mm:.1f} mm",
+                allowed=f"at most {bridge_limit_mm / CORD_WIDTH:.1f} mm of cord",
+                fix="give a thinner cord, or gasket for joints.transition and joints.bin_ring",
+            )
 
 
 def _times(ratio: Numbers, diameter_mm: float) -> float:
