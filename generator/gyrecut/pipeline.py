@@ -39,7 +39,7 @@ if TYPE_CHECKING:
     from gyrecut.catalogue.rows import Dust
     from gyrecut.correlations.geometry import CycloneGeometry
     from gyrecut.findings import Finding
-    from gyrecut.kit.contents import KitPiece
+    from gyrecut.kit.contents import Coupons, KitPiece
     from gyrecut.profile import Profile
     from gyrecut.proportions.dimensions import Dimensions
     from gyrecut.separation.answers import Answer
@@ -272,22 +272,28 @@ def build(design: Design, folder: Path, progress: Progress) -> BuildResult:
         measure_mesh,
         settings_of,
     )
+    from gyrecut.kit.coupons import make_coupons  # noqa: PLC0415 - same
     from gyrecut.kit.writing import write_kit  # noqa: PLC0415 - same
 
     pieces = tuple(_pieces(design, progress))
+    coupons = make_coupons(design.profile, design.stages[0].dimensions)
     limits = limits_of(design.profile.printer)
     findings = list(design.findings)
     polymer = polymers()[design.profile.material]
     settings = settings_of(design.profile.printer, polymer)
     measured: list[KitPiece] = []
-    for done, piece in enumerate(pieces, start=1):
+    to_check = (*pieces, *coupons.pieces)
+    for done, piece in enumerate(to_check, start=1):
         measures = measure_mesh(piece.mesh, limits)
         findings += findings_of(measures, piece.name, limits)
         estimate = estimate_for(measures, settings=settings, density=polymer.density)
         measured.append(replace(piece, printing=estimate))
-        progress("checks", done, len(pieces))
+        progress("checks", done, len(to_check))
     progress("files", 0, 1)
-    written = write_kit(_contents(design, tuple(measured), tuple(findings)), folder)
+    count = len(pieces)
+    coupons = replace(coupons, pieces=tuple(measured[count:]))
+    contents = _contents(design, tuple(measured[:count]), tuple(findings), coupons)
+    written = write_kit(contents, folder)
     progress("files", 1, 1)
     manifest: dict[str, Any] = json.loads((written / MANIFEST).read_bytes())
     return BuildResult(folder=written, findings=tuple(findings), manifest=manifest)
@@ -296,10 +302,11 @@ def build(design: Design, folder: Path, progress: Progress) -> BuildResult:
 def _pieces(design: Design, progress: Progress) -> Iterator[KitPiece]:
     from gyrecut.kit.measuring import kit_piece  # noqa: PLC0415 - CAD loads here
     from gyrecut.pieces import make_pieces  # noqa: PLC0415 - same
+    from gyrecut.pieces.marks import mark_style  # noqa: PLC0415 - same
     from gyrecut.solids import make_parts  # noqa: PLC0415 - same
 
     density = polymers()[design.profile.material].density
-    bed = bed_of(design.profile.printer)
+    bed, style = bed_of(design.profile.printer), mark_style(design.profile.printer)
     several = len(design.stages) > 1
     total = sum(stage.piece_count // stage.copies for stage in design.stages)
     done = 0
@@ -308,14 +315,19 @@ def _pieces(design: Design, progress: Progress) -> Iterator[KitPiece]:
         parts = make_parts(stage.dimensions)
         progress("solids", stage.number, len(design.stages))
         prefix = f"stage-{stage.number}-" if several else ""
-        for piece in make_pieces(parts, stage.dimensions, bed, prefix=prefix, copies=stage.copies):
+        for piece in make_pieces(
+            parts, stage.dimensions, bed, prefix=prefix, copies=stage.copies, style=style
+        ):
             yield kit_piece(piece, density=density, stage=stage.number)
             done += 1
             progress("pieces", done, total)
 
 
 def _contents(
-    design: Design, pieces: tuple[KitPiece, ...], findings: tuple[Finding, ...]
+    design: Design,
+    pieces: tuple[KitPiece, ...],
+    findings: tuple[Finding, ...],
+    coupons: Coupons,
 ) -> KitContents:
     profile = design.profile
     polymer = polymers()[profile.material]
@@ -349,6 +361,7 @@ def _contents(
         steps=tuple(
             step for stage in design.stages for step in steps(stage.dimensions, copies=stage.copies)
         ),
+        coupons=coupons,
     )
 
 

@@ -10,7 +10,9 @@ from typing import TYPE_CHECKING
 import pytest
 
 from gyrecut import pipeline
+from gyrecut.checks import PrintLimits, limits_of
 from gyrecut.pieces import Piece, make_pieces
+from gyrecut.pieces.marks import MarkStyle, mark_style
 from gyrecut.profile import load_profile
 from gyrecut.proportions.printing import bed_of
 from gyrecut.solids import Parts, make_parts
@@ -23,7 +25,7 @@ PROFILES = Path(__file__).parents[2] / "profiles"
 NAMES = ("luthier-sander", "joinery-planer", "casting-bench")
 
 
-@dataclass(frozen=True, kw_only=True)
+@dataclass(frozen=True, kw_only=True, eq=False)
 class Made:
     """One shipped separator, cut."""
 
@@ -31,6 +33,13 @@ class Made:
     bed: Bed
     parts: Parts
     pieces: tuple[Piece, ...]
+    style: MarkStyle
+    limits: PrintLimits
+
+    @property
+    def marked(self) -> tuple[Piece, ...]:
+        """The same pieces with their marks."""
+        return _marked(self)
 
     def named(self, start: str) -> tuple[Piece, ...]:
         return tuple(piece for piece in self.pieces if piece.name.startswith(start))
@@ -42,7 +51,19 @@ def made_from(name: str) -> Made:
     dimensions, bed = pipeline.design(profile).stages[0].dimensions, bed_of(profile.printer)
     parts = make_parts(dimensions)
     pieces = tuple(make_pieces(parts, dimensions, bed))
-    return Made(dimensions=dimensions, bed=bed, parts=parts, pieces=pieces)
+    return Made(
+        dimensions=dimensions,
+        bed=bed,
+        parts=parts,
+        pieces=pieces,
+        style=mark_style(profile.printer),
+        limits=limits_of(profile.printer),
+    )
+
+
+@cache
+def _marked(made: Made) -> tuple[Piece, ...]:
+    return tuple(make_pieces(made.parts, made.dimensions, made.bed, style=made.style))
 
 
 @pytest.fixture(params=NAMES)

@@ -43,6 +43,8 @@ class KitPiece:
         What one copy takes to print with shells and infill; None before it is measured.
     geometry_hash : str
         Equal for equal posed geometry, see `gyrecut.kit.geometry_hash`.
+    mark : str
+        Its name as it is engraved on it, "" where nothing is; "^" is an arrow up.
     """
 
     name: str
@@ -56,6 +58,7 @@ class KitPiece:
     volume_mm3: float
     mass_g: float
     geometry_hash: str
+    mark: str = ""
     printing: PrintEstimate | None = None
 
 
@@ -120,6 +123,25 @@ class Hardware:
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
+class Coupons:
+    """The small prints of a kit.
+
+    Parameters
+    ----------
+    pieces : tuple[KitPiece, ...]
+        Printed in one job.
+    duration_s : float
+        Of the whole job [s].
+    sheet : str
+        What to try, and which line of the profile to change; Markdown.
+    """
+
+    pieces: tuple[KitPiece, ...]
+    duration_s: float
+    sheet: str
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
 class KitContents:
     """Everything that goes into one kit.
 
@@ -145,6 +167,8 @@ class KitContents:
         What is bought.
     steps : tuple[str, ...]
         How the pieces go together, a step a sentence.
+    coupons : Coupons or None
+        Small prints that come before the large ones.
     """
 
     version: str
@@ -160,3 +184,4 @@ class KitContents:
     pieces: tuple[KitPiece, ...]
     hardware: tuple[Hardware, ...] = ()
     steps: tuple[str, ...] = ()
+    coupons: Coupons | None = None

@@ -1,4 +1,4 @@
-"""Coupons of a kit: small prints to measure before the large ones, and the sheet that reads them."""
+"""Coupons of a kit: small prints to try before the large ones, and the sheet that reads them."""
 
 from __future__ import annotations
 
@@ -10,6 +10,7 @@ import numpy as np
 
 from gyrecut.catalogue import hoses, polymers
 from gyrecut.checks import print_estimate, settings_of
+from gyrecut.kit.contents import Coupons
 from gyrecut.kit.measuring import kit_piece
 from gyrecut.pieces.coupon_pieces import SIGNS, gauge_piece, insert_piece, joint_pieces
 from gyrecut.pieces.marks import mark_style
@@ -20,13 +21,12 @@ from gyrecut.solids.coupons import HOLE_STEPS_MM, lands
 if TYPE_CHECKING:
     from collections.abc import Sequence
 
-    from gyrecut.kit.contents import KitPiece
     from gyrecut.pieces.piece import Piece
     from gyrecut.profile import Profile
     from gyrecut.proportions.dimensions import Cuff, Dimensions
 
 MM = 1000.0
-LANDS_MM = (5.0, 4.0, 3.0)  # a lower one has no room for its lines
+LANDS_MM = (4.0, 3.0, 2.5)  # a lower step has no room for its lines
 LONGEST_S = 3600.0
 CLEARANCE_STEP_MM = 0.05
 LEVEL = cos(radians(45.0))
@@ -40,25 +40,6 @@ class Gauge:
     key: str
     cuff: Cuff
     mating_mm: float
-
-
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Coupons:
-    """The small prints of a kit.
-
-    Parameters
-    ----------
-    pieces : tuple of KitPiece
-        Printed in one job.
-    duration_s : float
-        Of the whole job [s].
-    sheet : str
-        What to try, and which line of the profile to change; Markdown.
-    """
-
-    pieces: tuple[KitPiece, ...]
-    duration_s: float
-    sheet: str
 
 
 def make_coupons(profile: Profile, d: Dimensions) -> Coupons:
@@ -138,12 +119,15 @@ def job_duration(pieces: Sequence[Piece], profile: Profile) -> float:
 def _sheet(
     profile: Profile, d: Dimensions, tried: Sequence[Gauge], land_mm: float, duration: float
 ) -> str:
-    sections = (
-        f"# {profile.name}: print these first",
+    intro = (
         f"`coupons.3mf` holds them all in print pose; about {duration / 60:.0f} minutes with "
         f"{profile.material}, as the profile sets the printer. Print them with the settings, the "
         "material and the side of the bed that the kit will have. Let them cool, try them, write "
-        "what you find into the empty column, change the profile's line, and build again.",
+        "what you find into the empty column, change the profile's line, and build again."
+    )
+    sections = (
+        f"# {profile.name}: print these first",
+        intro,
         *(_hose_section(gauge, land_mm) for gauge in tried),
         _clearance_section(d),
         _insert_section(d),
@@ -153,11 +137,9 @@ def _sheet(
 
 def _hose_section(gauge: Gauge, land_mm: float) -> str:
     steps = lands(gauge.cuff, gauge.mating_mm, land_mm)
-    how = (
-        "Push the hose over it"
-        if gauge.cuff.fit == "over"
-        else "Push the hose's end into it"
-    )
+    how = "Push the hose over it" if gauge.cuff.fit == "over" else "Push the hose's end into it"
+    tip = gauge.cuff.tip_diameter_mm - gauge.mating_mm
+    root = gauge.cuff.root_diameter_mm - gauge.mating_mm
     rows = [
         (str(count), f"{step.diameter_mm:.2f}", f"`measured: {step.diameter_mm:.2f} mm`", "")
         for count, step in enumerate(steps, start=1)
@@ -165,9 +147,9 @@ def _hose_section(gauge: Gauge, land_mm: float) -> str:
     return (
         f"## Hose: `{gauge.name}`\n\n"
         f"{how}, straight and firmly by hand. Count the lines on the step at which it stops, and "
-        f"write that step's line under `{gauge.key}` in the profile. The cuffs of the kit have the "
-        "same taper and hold a hose of that size half way along. Where it stops at none, measure "
-        "it with a calliper.\n\n"
+        f"write that step's line under `{gauge.key}` in the profile. The kit's cuff has the same "
+        f"taper: {tip:+.1f} mm at the tip and {root:+.1f} mm at the root on what that line says. "
+        "Where it stops at none, measure it with a calliper.\n\n"
         + _table(("lines", "diameter mm", f"line under `{gauge.key}`", "stops here"), rows)
     )
 

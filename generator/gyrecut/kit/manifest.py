@@ -11,10 +11,12 @@ from typing import TYPE_CHECKING
 from gyrecut.findings import Severity, worst
 
 if TYPE_CHECKING:
-    from gyrecut.kit.contents import KitContents, KitPiece
+    from gyrecut.kit.contents import Coupons, KitContents, KitPiece
 
 FORMAT = "gyrecut-kit"
 SCHEMA = 1
+PIECES, COUPONS = "pieces", "coupons"  # folders in a kit
+COUPON_SHEET = "coupons.md"
 
 
 @dataclasses.dataclass(frozen=True, slots=True, kw_only=True)
@@ -69,6 +71,7 @@ def manifest_document(contents: KitContents, files: Iterable[FileRecord]) -> dic
         "pieces": [_piece(piece) for piece in contents.pieces],
         "hardware": plain(contents.hardware),
         "steps": plain(contents.steps),
+        "coupons": _coupons(contents.coupons),
         "files": plain(tuple(files)),
     }
 
@@ -93,9 +96,9 @@ def manifest_bytes(contents: KitContents, files: Iterable[FileRecord]) -> bytes:
     return f"{text}\n".encode()
 
 
-def piece_files(name: str) -> dict[str, str]:
+def piece_files(name: str, folder: str = PIECES) -> dict[str, str]:
     """Say where the files of a piece stand in a kit, by format."""
-    return {"stl": f"pieces/{name}.stl", "step": f"pieces/{name}.step"}
+    return {"stl": f"{folder}/{name}.stl", "step": f"{folder}/{name}.step"}
 
 
 def plain(value: object) -> object:
@@ -133,7 +136,7 @@ def plain(value: object) -> object:
     raise TypeError(f"{type(value).__name__} has no place in a manifest: {value!r}")
 
 
-def _piece(piece: KitPiece) -> dict[str, object]:
+def _piece(piece: KitPiece, folder: str = PIECES) -> dict[str, object]:
     return {
         "name": piece.name,
         "title": piece.title,
@@ -143,6 +146,17 @@ def _piece(piece: KitPiece) -> dict[str, object]:
         "volume_mm3": round(piece.volume_mm3, 3),
         "mass_g": round(piece.mass_g, 3),
         "printing": plain(piece.printing),
-        "files": piece_files(piece.name),
+        "files": piece_files(piece.name, folder),
         "geometry_hash": piece.geometry_hash,
+        "mark": piece.mark,
+    }
+
+
+def _coupons(coupons: Coupons | None) -> dict[str, object] | None:
+    if coupons is None:
+        return None
+    return {
+        "sheet": COUPON_SHEET,
+        "duration_s": round(coupons.duration_s),
+        "pieces": [_piece(piece, COUPONS) for piece in coupons.pieces],
     }

@@ -43,4 +43,5 @@ def kit_piece(piece: Piece, *, density: float, stage: int = 1) -> KitPiece:
         volume_mm3=volume,
         mass_g=volume * density * GRAMS_PER_MM3,
         geometry_hash=geometry_hash(piece.mesh),
+        mark=piece.mark,
     )

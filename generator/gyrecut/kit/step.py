@@ -122,7 +122,7 @@ def assembly_step_bytes(
         label = _named(shapes.AddShape(_own_shape(placed), False), part)  # noqa: FBT003
         _named(shapes.AddComponent(whole, label, TopLoc_Location()), part)
     shapes.UpdateAssemblies()
-    return _written(document, name, version=version, stamp=stamp)
+    return _written(document, name, version=version, stamp=stamp, numbered=True)
 
 
 def _new_document() -> tuple[TDocStd_Document, XCAFDoc_ShapeTool]:
@@ -143,7 +143,9 @@ def _own_shape(solid: Solid) -> TopoDS_Shape:
     return BRepBuilderAPI_Transform(shape.Located(TopLoc_Location()), move, True).Shape()  # noqa: FBT003
 
 
-def _written(document: TDocStd_Document, name: str, *, version: str, stamp: str) -> bytes:
+def _written(
+    document: TDocStd_Document, name: str, *, version: str, stamp: str, numbered: bool = False
+) -> bytes:
     STEPCAFControl_Controller.Init_s()  # the settings below do not exist before
     Interface_Static.SetCVal_s("write.step.unit", "MM")
     # Curves in the parameter plane of each surface: every reader makes its own, and they take
@@ -154,7 +156,8 @@ def _written(document: TDocStd_Document, name: str, *, version: str, stamp: str)
     if not writer.Transfer(document, STEPControl_StepModelType.STEPControl_AsIs):
         raise _unwritable(name)
     model = writer.ChangeWriter().Model()
-    _number_occurrences(model)
+    if numbered:
+        _number_occurrences(model)
     header = APIHeaderSection_MakeHeader(model)
     header.SetName(TCollection_HAsciiString(name))
     header.SetTimeStamp(TCollection_HAsciiString(stamp))

@@ -6,7 +6,7 @@ from typing import TYPE_CHECKING
 
 from gyrecut.findings import Severity
 from gyrecut.kit.cautions import cautions
-from gyrecut.kit.manifest import piece_files
+from gyrecut.kit.manifest import COUPON_SHEET, piece_files
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Iterator, Sequence
@@ -15,6 +15,7 @@ if TYPE_CHECKING:
     from gyrecut.kit.contents import Fact, KitContents, KitPiece
 
 GRAMS_PER_KILOGRAM = 1000
+SECONDS_PER_MINUTE = 60
 SECONDS_PER_HOUR = 3600
 PLAIN_FROM = 1e4  # from here four digits would need an exponent
 
@@ -36,6 +37,7 @@ def summary_text(contents: KitContents) -> str:
         verdict(contents),
         _facts("The body", contents.body),
         _estimate(contents.estimate),
+        _coupons(contents),
         _pieces(contents),
         _hardware(contents),
         _steps(contents.steps),
@@ -86,6 +88,17 @@ def _estimate(facts: Sequence[Fact]) -> str:
     )
 
 
+def _coupons(contents: KitContents) -> str:
+    if contents.coupons is None:
+        return ""
+    minutes = contents.coupons.duration_s / SECONDS_PER_MINUTE
+    return (
+        f"## Print first: the coupons\n\n`coupons.3mf` takes about {minutes:.0f} minutes and shows "
+        f"how hoses, joints and inserts fit; `{COUPON_SHEET}` says which line of the profile to "
+        "change."
+    )
+
+
 def _pieces(contents: KitContents) -> str:
     rows = [
         (
@@ -106,7 +119,8 @@ def _pieces(contents: KitContents) -> str:
         f"## Pieces to print\n\n{_table(header, rows)}\n\n"
         f"In all {total}, {kilograms:.2f} kg of {contents.polymer.name} when printed full, "
         f"without brims and waste{_usual(contents)}. Every file is in millimetres and already in "
-        "its print pose; `kit.3mf` holds all of them, `assembly.step` shows them in the machine."
+        "its print pose; `kit.3mf` holds all of them, `assembly.step` shows them in the machine. "
+        f"{_marks(contents)}"
     )
 
 
@@ -125,6 +139,19 @@ def _usual(contents: KitContents) -> str:
     kilograms = sum(copies * one.mass_g for copies, one in known) / GRAMS_PER_KILOGRAM
     hours = sum(copies * one.duration_s for copies, one in known) / SECONDS_PER_HOUR
     return f"; with shells and infill about {kilograms:.2f} kg and {hours:.0f} h"
+
+
+def _marks(contents: KitContents) -> str:
+    bare = [piece.title for piece in contents.pieces if not piece.mark]
+    if len(bare) == len(contents.pieces):
+        return "No piece carries its name; label them as they come off the bed."
+    text = (
+        "Each carries its name; an arrow points up in the machine, and lines stand on both sides "
+        "of a joint and meet when it is together."
+    )
+    if bare:
+        text += f" No room for a name was on: {', '.join(bare)}; label by hand."
+    return text
 
 
 def _hardware(contents: KitContents) -> str:

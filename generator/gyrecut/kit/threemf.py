@@ -99,7 +99,7 @@ def threemf_bytes(contents: KitContents) -> bytes:
     try:
         return _written(_model(contents))
     except Lib3MF.ELib3MFException as wrong:
-        raise BuildError(f"kit.3mf could not be made: {wrong}") from wrong
+        raise BuildError(f"a 3MF file could not be made: {wrong}") from wrong
 
 
 def _model(contents: KitContents) -> Lib3MF.Model:
@@ -132,7 +132,7 @@ def _mesh_object(model: Lib3MF.Model, piece: KitPiece) -> Lib3MF.MeshObject:
         (Lib3MF.Triangle * len(facets)).from_buffer(facets),
     )
     if not mesh_object.IsManifoldAndOriented():
-        raise BuildError(f"{piece.name}: lib3mf finds its mesh not manifold; kit.3mf was not made")
+        raise BuildError(f"{piece.name}: lib3mf finds its mesh not manifold; no 3MF file was made")
     return mesh_object
 
 

@@ -4,11 +4,19 @@ from __future__ import annotations
 
 import os
 import re
+from dataclasses import replace
 from typing import TYPE_CHECKING
 
 from gyrecut.errors import BuildError
 from gyrecut.kit.folder import MANIFEST, KitFile, replace_folder
-from gyrecut.kit.manifest import manifest_bytes, piece_files, recorded
+from gyrecut.kit.manifest import (
+    COUPON_SHEET,
+    COUPONS,
+    PIECES,
+    manifest_bytes,
+    piece_files,
+    recorded,
+)
 from gyrecut.kit.step import assembly_step_bytes, piece_step_bytes, time_stamp
 from gyrecut.kit.stl import stl_bytes
 from gyrecut.kit.summary import summary_text
@@ -61,7 +69,8 @@ def kit_files(contents: KitContents, *, stamp: str) -> Iterator[KitFile]:
     KitFile
         Path in the kit, and its bytes; the same for the same contents and stamp.
     """
-    _check_names(contents.pieces)
+    coupons = contents.coupons.pieces if contents.coupons is not None else ()
+    _check_names((*contents.pieces, *coupons))
     records = []
     for file in _files_without_manifest(contents, stamp=stamp):
         records.append(recorded(file.path, file.data))
@@ -72,16 +81,29 @@ def kit_files(contents: KitContents, *, stamp: str) -> Iterator[KitFile]:
 def _files_without_manifest(contents: KitContents, *, stamp: str) -> Iterator[KitFile]:
     version = contents.version
     yield KitFile(path="summary.md", data=summary_text(contents).encode())
-    for piece in contents.pieces:
-        paths = piece_files(piece.name)
-        label = f"gyrecut {version}, {piece.name}, millimetres"
-        yield KitFile(path=paths["stl"], data=stl_bytes(piece.mesh, label))
-        step = piece_step_bytes(piece.name, piece.posed, version=version, stamp=stamp)
-        yield KitFile(path=paths["step"], data=step)
+    yield from _files_of(contents.pieces, PIECES, version=version, stamp=stamp)
     yield KitFile(path="kit.3mf", data=threemf_bytes(contents))
     parts = [(piece.name, piece.placed) for piece in contents.pieces]
     assembly = assembly_step_bytes(contents.profile_name, parts, version=version, stamp=stamp)
     yield KitFile(path="assembly.step", data=assembly)
+
+    if contents.coupons is not None:
+        coupons = contents.coupons
+        yield from _files_of(coupons.pieces, COUPONS, version=version, stamp=stamp)
+        job = replace(contents, pieces=coupons.pieces)
+        yield KitFile(path="coupons.3mf", data=threemf_bytes(job))
+        yield KitFile(path=COUPON_SHEET, data=coupons.sheet.encode())
+
+
+def _files_of(
+    pieces: Sequence[KitPiece], folder: str, *, version: str, stamp: str
+) -> Iterator[KitFile]:
+    for piece in pieces:
+        paths = piece_files(piece.name, folder)
+        label = f"gyrecut {version}, {piece.name}, millimetres"
+        yield KitFile(path=paths["stl"], data=stl_bytes(piece.mesh, label))
+        step = piece_step_bytes(piece.name, piece.posed, version=version, stamp=stamp)
+        yield KitFile(path=paths["step"], data=step)
 
 
 def _check_names(pieces: Sequence[KitPiece]) -> None:

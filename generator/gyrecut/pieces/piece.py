@@ -37,6 +37,8 @@ class Piece:
         The one mesh of `posed` [mm].
     copies : int
         How many of it the kit needs.
+    mark : str
+        What is engraved on it as its name, "" where nothing is.
     """
 
     name: str
@@ -45,10 +47,18 @@ class Piece:
     posed: Solid
     mesh: Trimesh
     copies: int = 1
+    mark: str = ""
 
 
 def laid_down(
-    placed: Solid, upright: Location, bed: Bed, *, name: str, title: str, copies: int
+    placed: Solid,
+    upright: Location,
+    bed: Bed,
+    *,
+    name: str,
+    title: str,
+    copies: int,
+    mark: str = "",
 ) -> Piece:
     """Lay a solid on the bed.
 
@@ -60,7 +70,7 @@ def laid_down(
         Turns the face it stands on to the bottom.
     bed : Bed
         What the printer leaves; the piece is turned about the vertical to fit it best.
-    name, title, copies
+    name, title, copies, mark
         As in `Piece`.
 
     Returns
@@ -89,6 +99,7 @@ def laid_down(
             (vertices - low).astype(np.float32).astype(np.float64), mesh.faces, process=False
         ),
         copies=copies,
+        mark=mark,
     )
 
 

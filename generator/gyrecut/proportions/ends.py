@@ -156,9 +156,7 @@ def outlet_cuff(*, finder: Finder, cuff: Cuff, joint: Joint, slope: float) -> Ou
     )
 
 
-def bell_mouth(
-    *, finder: Finder, throat_mm: float, joint: Joint, edge_mm: float
-) -> BellMouth:
+def bell_mouth(*, finder: Finder, throat_mm: float, joint: Joint, edge_mm: float) -> BellMouth:
     """Proportion the rounded intake of a blower that stands on the finder.
 
     Parameters

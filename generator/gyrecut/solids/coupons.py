@@ -22,7 +22,6 @@ if TYPE_CHECKING:
 CUFF_STEPS_MM = (0.4, 0.2, 0.0, -0.2, -0.4)  # on the diameter, from the foot up for "over"
 HOLE_STEPS_MM = (-0.1, 0.0, 0.1)  # on the diameter
 BEYOND = 1.0
-FLOOR_MM = 2.0  # under an insert hole
 FOOT_MM = 2.0  # below the socket's gusset
 GRIP_MM = 2.0  # of the spigot above the socket
 SPIGOT_RADIUS_MM = 8.0
@@ -123,9 +122,7 @@ def socket_coupon(body: Body, joint: Joint, slope: float) -> Solid:
 def spigot_coupon(body: Body, joint: Joint) -> Solid:
     """Make a ring's plain end, as long as the lap and a grip more."""
     outer, inner, height = body.outer_radius_mm, body.radius_mm, joint.lap_mm + GRIP_MM
-    return sound(
-        "spigot", revolved((inner, 0.0), (outer, 0.0), (outer, height), (inner, height))
-    )
+    return sound("spigot", revolved((inner, 0.0), (outer, 0.0), (outer, height), (inner, height)))
 
 
 def insert_places(screws: Screws) -> tuple[Point, ...]:
@@ -134,14 +131,12 @@ def insert_places(screws: Screws) -> tuple[Point, ...]:
 
 
 def insert_coupon(screws: Screws) -> Solid:
-    """Make a bar of bosses with insert holes, each 0.1 mm wider than the one before."""
-    half, height = screws.boss_mm / 2, screws.insert_depth_mm + FLOOR_MM
+    """Make a bar of bosses with insert holes, through it, each 0.1 mm wider than the one before."""
+    half, height = screws.boss_mm / 2, screws.insert_depth_mm
     places = insert_places(screws)
     bar = block((-half, -half, 0.0), (places[-1][0] + half, half, height))
     holes = (
-        upright_holes(
-            (place,), screws.insert_hole_mm + step, bottom=FLOOR_MM, top=height + BEYOND
-        )
+        upright_holes((place,), screws.insert_hole_mm + step, bottom=-BEYOND, top=height + BEYOND)
         for place, step in zip(places, HOLE_STEPS_MM, strict=True)
     )
     return sound("insert bar", without("insert bar", bar, *(hole for (hole,) in holes)))
