@@ -23,7 +23,7 @@ from gyrecut.strength.verdicts import (
     KPA,
     as_thin,
     least_mm,
-    severity_of,
+    verdict,
 )
 from gyrecut.strength.walls import ASPECT, stress_rectangle_supported
 
@@ -57,23 +57,19 @@ def bin_findings(inputs: StrengthInputs) -> Iterator[Finding]:
     """
     suction, factor = inputs.design_suction, inputs.safety_factor
     holds_to = bin_holds_to(inputs)
-    margin = holds_to / suction
-    severity = severity_of(margin, factor)
-    holds = severity is Severity.NOTE
     on_lid = float(end_load(pressure=suction, diameter=inputs.bin_mouth))
-    yield Finding(
-        code="bin-holds" if holds else "bin-collapses",
-        severity=severity,
+    yield verdict(
+        ("bin-holds", "bin-collapses"),
+        holds_to / suction,
+        factor,
         part="bin",
         what=(
             f"The bin's wall holds {holds_to / KPA:.1f} kPa of suction; {suction / KPA:.1f} kPa "
             f"can come. Its lid is pressed on with {on_lid:.0f} N and is not checked."
         ),
-        measured=margin,
-        limit=factor,
         where=f"{inputs.bin_material.title.lower()}, {_height(inputs) * MM:.0f} mm tall, its rim "
         "held round by lid and floor",
-        fix="" if holds else _stronger(inputs),
+        fix=lambda: _stronger(inputs),
     )
 
 

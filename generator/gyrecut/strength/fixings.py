@@ -15,7 +15,7 @@ from gyrecut.strength.joints import (
     pull_out_force,
     screw_pitch_tema,
 )
-from gyrecut.strength.verdicts import HELD_SHARE, KPA, severity_of
+from gyrecut.strength.verdicts import HELD_SHARE, KPA, verdict
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
@@ -106,21 +106,17 @@ def screw_findings(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
         )
     )
     load = hanging_weight(d, inputs) / len(places)
-    margin = each / load
-    severity = severity_of(margin, factor)
-    holds = severity is Severity.NOTE
-    yield Finding(
-        code="screws-hold" if holds else "screws-pull-out",
-        severity=severity,
+    yield verdict(
+        ("screws-hold", "screws-pull-out"),
+        each / load,
+        factor,
         part="lid",
         what=(
             f"Were the separator lifted by its lid with the bin full, each of its {len(places)} "
             f"screws would carry {load:.0f} N; an insert holds {each:.0f} N."
         ),
-        measured=margin,
-        limit=factor,
         where="heat-set inserts of the rim; suction presses the lid on",
-        fix="" if holds else "Let the bin stand on the floor, or choose a larger joints.fastener.",
+        fix=lambda: "Let the bin stand on the floor, or choose a larger joints.fastener.",
     )
     yield from _pitch(d, inputs)
 
@@ -195,26 +191,21 @@ def widest_pitch_mm(places_mm: tuple[Point, ...]) -> float:
 def _glued(
     part: str, shear: float, inputs: StrengthInputs, *, load: str, gravest: Severity
 ) -> Finding:
-    margin = HELD_SHARE * GLUE_STRENGTH / shear
-    severity = severity_of(margin, inputs.safety_factor)
-    holds = severity is Severity.NOTE
-    if severity is Severity.STOP:
-        severity = gravest
-    return Finding(
-        code="joints-hold" if holds else "joints-shear",
-        severity=severity,
+    return verdict(
+        ("joints-hold", "joints-shear"),
+        HELD_SHARE * GLUE_STRENGTH / shear,
+        inputs.safety_factor,
         part=part,
         what=(
             f"With {load} the glue of the {part} is sheared to {shear / MPA:.2f} MPa at its ends; "
             f"held for hours it bears {HELD_SHARE * GLUE_STRENGTH / MPA:.1f} MPa."
         ),
-        measured=margin,
-        limit=inputs.safety_factor,
         where="epoxy on sanded faces, peak after Volkersen",
-        fix=""
-        if holds
-        else "Use a tougher glue, or a thicker walls.body; a longer lap makes it tighter, not "
-        "stronger.",
+        fix=lambda: (
+            "Use a tougher glue, or a thicker walls.body; a longer lap makes it tighter, not "
+            "stronger."
+        ),
+        gravest=gravest,
     )
 
 

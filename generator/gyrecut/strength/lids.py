@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING
 from gyrecut.findings import Finding, Severity
 from gyrecut.strength.plates import deflection_holed_supported, stress_holed_supported
 from gyrecut.strength.ranges import THIN_PLATE
-from gyrecut.strength.verdicts import HELD_SHARE, KPA, SEAMS, as_thin, least_mm, severity_of
+from gyrecut.strength.verdicts import HELD_SHARE, KPA, SEAMS, as_thin, least_mm, verdict
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
@@ -43,32 +43,35 @@ def lid_findings(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
     suction, factor = inputs.design_suction, inputs.safety_factor
     thickness = d.lid.thickness_mm
     stress = _stress(d, inputs, suction, thickness)
-    margin = _strength(d, inputs) / stress
-    severity = severity_of(margin, factor)
-    holds = severity is Severity.NOTE
-    strong = least_mm(
-        lambda t: _strength(d, inputs) >= factor * _stress(d, inputs, suction, t),
-        low_mm=0.4,
-        high_mm=THICKEST_MM,
-    )
-    yield Finding(
-        code="lid-holds" if holds else "lid-breaks",
-        severity=severity,
+    bears = _strength(d, inputs)
+
+    def strong_mm() -> float | None:
+        return least_mm(
+            lambda t: bears >= factor * _stress(d, inputs, suction, t),
+            low_mm=0.4,
+            high_mm=THICKEST_MM,
+        )
+
+    yield verdict(
+        ("lid-holds", "lid-breaks"),
+        bears / stress,
+        factor,
         part="lid",
         what=(
             f"At {suction / KPA:.1f} kPa the lid is stressed to {stress / MPA:.1f} MPa round the "
-            f"finder; held for hours it bears {_strength(d, inputs) / MPA:.1f} MPa."
+            f"finder; held for hours it bears {bears / MPA:.1f} MPa."
         ),
-        measured=margin,
-        limit=factor,
         where="as a loose plate with a free hole",
-        fix="" if holds else _thicker(strong),
+        fix=lambda: _thicker(strong_mm()),
     )
     sunk = _sunk_mm(d, inputs, thickness)
     stays = sunk <= LINEAR_SHARE * thickness
-    flat = least_mm(
-        lambda t: _sunk_mm(d, inputs, t) <= LINEAR_SHARE * t, low_mm=0.4, high_mm=THICKEST_MM
-    )
+
+    def flat_mm() -> float | None:
+        return least_mm(
+            lambda t: _sunk_mm(d, inputs, t) <= LINEAR_SHARE * t, low_mm=0.4, high_mm=THICKEST_MM
+        )
+
     yield Finding(
         code="lid-stays-flat" if stays else "lid-dishes",
         severity=Severity.NOTE if stays else Severity.WARN,
@@ -82,7 +85,7 @@ def lid_findings(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
         limit=LINEAR_SHARE * thickness,
         unit="mm",
         where="round the finder, against half of the lid's thickness",
-        fix="" if stays else _thicker(flat),
+        fix="" if stays else _thicker(flat_mm()),
     )
 
 

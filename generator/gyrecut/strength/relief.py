@@ -8,7 +8,8 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from gyrecut.airflow.ranges import Range
-from gyrecut.strength.ranges import AREA, DENSITY, DIAMETER, FLOW
+from gyrecut.strength.joints import end_load
+from gyrecut.strength.ranges import AREA, DENSITY, FLOW
 
 if TYPE_CHECKING:
     from gyrecut.airflow.ranges import Numbers
@@ -190,7 +191,5 @@ def opening_force(*, diameter: Numbers, suction: Numbers) -> Numbers:
     ----------
     .. [1] Holds by definition.
     """
-    DIAMETER.check(diameter)
     SUCTION.check(suction)
-    force: Numbers = suction * pi / 4 * diameter**2
-    return force
+    return end_load(pressure=suction, diameter=diameter)

@@ -22,7 +22,7 @@ from gyrecut.strength.verdicts import (
     SEAMS,
     as_thin,
     least_mm,
-    severity_of,
+    verdict,
 )
 
 if TYPE_CHECKING:
@@ -68,21 +68,17 @@ def body_findings(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
     """
     suction, factor = inputs.design_suction, inputs.safety_factor
     holds_to = body_holds_to(d, inputs)
-    margin = holds_to / suction
-    severity = severity_of(margin, factor)
-    holds = severity is Severity.NOTE
-    yield Finding(
-        code="body-holds" if holds else "body-collapses",
-        severity=severity,
+    yield verdict(
+        ("body-holds", "body-collapses"),
+        holds_to / suction,
+        factor,
         part="barrel and cone",
         what=(
             f"Barrel and cone hold {holds_to / KPA:.1f} kPa of suction before they fold; "
             f"{suction / KPA:.1f} kPa can come."
         ),
-        measured=margin,
-        limit=factor,
         where=f"from lid to bin ring{_slight_ends(d, inputs)}",
-        fix="" if holds else _stiffer(d, inputs),
+        fix=lambda: _stiffer(d, inputs),
     )
     yield from _cone(d, inputs)
 
@@ -171,21 +167,17 @@ def _cone(d: Dimensions, inputs: StrengthInputs) -> Iterator[Finding]:
             )
         )
     )
-    margin = holds_to / suction
-    severity = severity_of(margin, factor)
-    holds = severity is Severity.NOTE
-    yield Finding(
-        code="cone-holds" if holds else "cone-collapses",
-        severity=severity,
+    yield verdict(
+        ("cone-holds", "cone-collapses"),
+        holds_to / suction,
+        factor,
         part="cone",
         what=(
             f"The cone alone, its top held round, holds {holds_to / KPA:.1f} kPa of suction; "
             f"{suction / KPA:.1f} kPa can come."
         ),
-        measured=margin,
-        limit=factor,
         where="from barrel to bin ring",
-        fix="" if holds else "Give a thicker walls.body, or put rings round the cone as well.",
+        fix=lambda: "Give a thicker walls.body, or put rings round the cone as well.",
     )
 
 

@@ -5,7 +5,7 @@ from __future__ import annotations
 from math import ceil
 from typing import TYPE_CHECKING
 
-from gyrecut.findings import Severity
+from gyrecut.findings import Finding, Severity
 
 if TYPE_CHECKING:
     from collections.abc import Callable
@@ -26,6 +26,50 @@ def severity_of(margin: float, factor: float) -> Severity:
     if margin < 1:
         return Severity.STOP
     return Severity.WARN if margin < factor else Severity.NOTE
+
+
+def verdict(
+    codes: tuple[str, str],
+    margin: float,
+    factor: float,
+    *,
+    part: str,
+    what: str,
+    where: str,
+    fix: Callable[[], str],
+    gravest: Severity = Severity.STOP,
+) -> Finding:
+    """Say whether something holds, and what to do where it does not.
+
+    Parameters
+    ----------
+    codes : tuple of (str, str)
+        Where it holds, and where it does not.
+    margin, factor : float
+        How many times its load it holds, and should hold.
+    part, what, where : str
+        As in `Finding`.
+    fix : callable
+        Asked only where it does not hold, since it may have to search.
+    gravest : Severity
+        What to say at most.
+
+    Returns
+    -------
+    Finding
+    """
+    severity = severity_of(margin, factor)
+    holds = severity is Severity.NOTE
+    return Finding(
+        code=codes[0] if holds else codes[1],
+        severity=gravest if severity is Severity.STOP else severity,
+        part=part,
+        what=what,
+        measured=margin,
+        limit=factor,
+        where=where,
+        fix="" if holds else fix(),
+    )
 
 
 def as_thin(thickness: float, across: float, thin: Range) -> float:
