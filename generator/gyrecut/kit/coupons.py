@@ -12,6 +12,7 @@ from gyrecut.catalogue import hoses, polymers
 from gyrecut.checks import print_estimate, settings_of
 from gyrecut.kit.contents import Coupons
 from gyrecut.kit.measuring import kit_piece
+from gyrecut.kit.tables import markdown_table
 from gyrecut.pieces.coupon_pieces import SIGNS, gauge_piece, insert_piece, joint_pieces
 from gyrecut.pieces.marks import mark_style
 from gyrecut.proportions.dimensions import OutletCuff
@@ -150,7 +151,7 @@ def _hose_section(gauge: Gauge, land_mm: float) -> str:
         f"write that step's line under `{gauge.key}` in the profile. The kit's cuff has the same "
         f"taper: {tip:+.1f} mm at the tip and {root:+.1f} mm at the root on what that line says. "
         "Where it stops at none, measure it with a calliper.\n\n"
-        + _table(("lines", "diameter mm", f"line under `{gauge.key}`", "stops here"), rows)
+        + markdown_table(("lines", "diameter mm", f"line under `{gauge.key}`", "stops here"), rows)
     )
 
 
@@ -166,7 +167,7 @@ def _clearance_section(d: Dimensions) -> str:
         f"Lap {d.joint.lap_mm:g} mm, gap {now:g} mm on the radius, as between the rings of the "
         "body. Sand off the brim, then put the spigot into the socket, down to the seat. The same "
         "line sets the gap in all joints; after a change print this pair again.\n\n"
-        + _table(("the spigot", "line under `printer`", "so it is"), rows)
+        + markdown_table(("the spigot", "line under `printer`", "so it is"), rows)
     )
 
 
@@ -186,10 +187,5 @@ def _insert_section(d: Dimensions) -> str:
         f"{screws.insert_hole_mm:g} mm: the profile has no line for them, since they follow the "
         "insert. If + holds best, ream the kit's holes with a drill of that size before you press. "
         "If - holds best, take inserts with a coarser knurl, or set them in epoxy.\n\n"
-        + _table(("marked", "hole mm", "holds best"), rows)
+        + markdown_table(("marked", "hole mm", "holds best"), rows)
     )
-
-
-def _table(header: Sequence[str], rows: Sequence[Sequence[str]]) -> str:
-    lines = (header, ["---"] * len(header), *rows)
-    return "\n".join("| " + " | ".join(line) + " |" for line in lines)

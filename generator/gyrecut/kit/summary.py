@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING
 from gyrecut.findings import Severity
 from gyrecut.kit.cautions import cautions
 from gyrecut.kit.manifest import COUPON_SHEET, piece_files
+from gyrecut.kit.tables import markdown_table
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Iterator, Sequence
@@ -75,7 +76,7 @@ def verdict(contents: KitContents) -> str:
 
 def _facts(title: str, facts: Iterable[Fact]) -> str:
     rows = [(fact.label, _amount(fact.value, fact.unit), fact.note) for fact in facts]
-    return f"## {title}\n\n{_table(('what', 'value', 'note'), rows)}"
+    return f"## {title}\n\n{markdown_table(('what', 'value', 'note'), rows)}"
 
 
 def _estimate(facts: Sequence[Fact]) -> str:
@@ -116,7 +117,7 @@ def _pieces(contents: KitContents) -> str:
     total = "one print" if count == 1 else f"{count} prints"
     header = ("piece", "file", "copies", "size mm", "g full", "about g", "about h")
     return (
-        f"## Pieces to print\n\n{_table(header, rows)}\n\n"
+        f"## Pieces to print\n\n{markdown_table(header, rows)}\n\n"
         f"In all {total}, {kilograms:.2f} kg of {contents.polymer.name} when printed full, "
         f"without brims and waste{_usual(contents)}. Every file is in millimetres and already in "
         "its print pose; `kit.3mf` holds all of them, `assembly.step` shows them in the machine. "
@@ -158,7 +159,7 @@ def _hardware(contents: KitContents) -> str:
     if not contents.hardware:
         return ""
     rows = [(item.what, item.quantity, item.where) for item in contents.hardware]
-    return f"## What to buy\n\n{_table(('what', 'how much', 'for'), rows)}"
+    return f"## What to buy\n\n{markdown_table(('what', 'how much', 'for'), rows)}"
 
 
 def _steps(steps: Sequence[str]) -> str:
@@ -212,13 +213,3 @@ def _finding_parts(found: Finding) -> Iterator[str]:
 def _amount(value: float, unit: str) -> str:
     digits = f"{value:.0f}" if abs(value) >= PLAIN_FROM else f"{value:.4g}"
     return f"{digits} {unit}".rstrip()
-
-
-def _table(header: Sequence[str], rows: Iterable[Sequence[str]]) -> str:
-    lines = [header, ["---"] * len(header), *rows]
-    return "\n".join(map(_table_line, lines))
-
-
-def _table_line(cells: Sequence[str]) -> str:
-    # An upright in a cell would end it.
-    return "| " + " | ".join(cell.replace("|", "\\|") for cell in cells) + " |"

@@ -6,12 +6,10 @@ from dataclasses import replace
 from math import atan, pi
 from typing import TYPE_CHECKING
 
-from cadquery.func import Location
-
 from gyrecut.pieces.engraving import engraved
 from gyrecut.pieces.glyphs import bar, figures
 from gyrecut.pieces.marks import Pose, placed
-from gyrecut.pieces.piece import Piece, laid_down
+from gyrecut.pieces.piece import AS_IT_STANDS, Piece, laid_down
 from gyrecut.pieces.places import Flat, Round
 from gyrecut.proportions.printing import NAME_MARGIN_MM
 from gyrecut.solids.coupons import (
@@ -35,7 +33,6 @@ if TYPE_CHECKING:
     from gyrecut.proportions.dimensions import Cuff, Joint, Screws
     from gyrecut.proportions.printing import Bed
 
-AS_IT_STANDS = Location((0.0, 0.0, 0.0))
 FRONT = -pi / 2
 GAUGE_WALL = 1.25  # of the thinnest wall: stiff enough to push a hose on
 JOINT_WALL = 2.0  # likewise; a thicker one would only take longer
@@ -88,7 +85,7 @@ def gauge_piece(
             bar(style.stroke_mm, height, (index - (count - 1) / 2) * pitch)
             for index in range(count)
         )
-        marks.append(placed(spot, lines, style.depth_in(wall), _standing(slope), style))
+        marks.append(placed(spot, lines, style.depth_in(wall), Pose.upright(slope), style))
     return _laid(engraved(solid, _there(marks), name), bed, name, title)
 
 
@@ -116,17 +113,13 @@ def insert_piece(screws: Screws, *, slope: float, bed: Bed, style: MarkStyle) ->
             ),
             figures(SIGNS[index], style.stroke_mm),
             style.depth_in((screws.boss_mm - screws.insert_hole_mm) / 2),
-            _standing(slope),
+            Pose.upright(slope),
             style,
         )
         for index, (x, _) in enumerate(insert_places(screws))
     ]
     name = "coupon-inserts"
     return _laid(engraved(solid, _there(marks), name), bed, name, "bar of insert holes")
-
-
-def _standing(slope: float) -> Pose:
-    return Pose(up=(0.0, 0.0, 1.0), slope=slope)
 
 
 def _there(marks: list[Mark | None]) -> list[Mark]:

@@ -12,7 +12,7 @@ from gyrecut.pieces.cutting import rings
 from gyrecut.pieces.glyphs import UP
 from gyrecut.pieces.marks import Pose, marked
 from gyrecut.pieces.mating import lid_lines, ring_lines
-from gyrecut.pieces.piece import Piece, laid_down
+from gyrecut.pieces.piece import AS_IT_STANDS, Piece, laid_down
 from gyrecut.pieces.sectors import plate_sectors, ring_sectors
 from gyrecut.proportions.dimensions import BellMouth
 
@@ -26,7 +26,6 @@ if TYPE_CHECKING:
     from gyrecut.proportions.printing import Bed
     from gyrecut.solids import Parts
 
-AS_IT_STANDS = Location((0.0, 0.0, 0.0))
 TURNED_OVER = Location((0.0, 0.0, 0.0), (1.0, 0.0, 0.0), 180.0)
 OUTLET_TITLES = {"bell-mouth": "bell-mouth for the blower", "outlet": "outlet with hose cuff"}
 LETTERS = "abcdefghijkl"

@@ -48,10 +48,14 @@ def on_lid(d: Dimensions, sector: int) -> list[Flat]:
     ]
 
 
-def on_top(radius_mm: float, angle: float, z_mm: float) -> Flat:
-    """Give a place on a level face, up pointing away from the axis."""
+def on_top(radius_mm: float, angle: float, z_mm: float, *, aside_mm: float = 0.0) -> Flat:
+    """Give a place on a level face, up pointing as the ray at `angle`, `aside_mm` left of it."""
     c, s = cos(angle), sin(angle)
-    return Flat(middle=(radius_mm * c, radius_mm * s, z_mm), right=(s, -c, 0.0), up=(c, s, 0.0))
+    return Flat(
+        middle=(radius_mm * c - aside_mm * s, radius_mm * s + aside_mm * c, z_mm),
+        right=(s, -c, 0.0),
+        up=(c, s, 0.0),
+    )
 
 
 def on_finder(d: Dimensions) -> list[Round]:

@@ -68,6 +68,11 @@ class Pose:
     up: Triple
     slope: float
 
+    @classmethod
+    def upright(cls, slope: float) -> Pose:
+        """Give the pose of a piece that prints as it stands in the machine."""
+        return cls(up=(0.0, 0.0, 1.0), slope=slope)
+
 
 def placed(
     spot: Spot, shapes: tuple[Figure, ...], depth_mm: float, pose: Pose, style: MarkStyle

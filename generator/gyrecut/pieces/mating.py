@@ -7,15 +7,21 @@ alike do not change places.
 
 from __future__ import annotations
 
-from math import cos, pi, sin
+from math import pi
 from typing import TYPE_CHECKING
 
 import numpy as np
 
 from gyrecut.pieces.glyphs import bar
-from gyrecut.pieces.mark_places import free_heights, lid_band, on_collar, on_wall, seam_angle
+from gyrecut.pieces.mark_places import (
+    free_heights,
+    lid_band,
+    on_collar,
+    on_top,
+    on_wall,
+    seam_angle,
+)
 from gyrecut.pieces.marks import Pose, placed
-from gyrecut.pieces.places import Flat
 from gyrecut.proportions.division import slot_arc
 from gyrecut.proportions.printing import NAME_MARGIN_MM
 
@@ -106,7 +112,7 @@ def _across(
                 (wall, bar(style.stroke_mm, length)),
                 (collar, bar(style.stroke_mm, in_collar)),
                 depth,
-                _standing(d),
+                Pose.upright(d.slope),
                 style,
             )
 
@@ -157,7 +163,7 @@ def _ring_seams(d: Dimensions, ring: Ring, style: MarkStyle) -> Iterator[list[tu
                 (on_wall(d.body, z, angle - (off + aside) / radius), short),
                 (on_wall(d.body, z, angle + (off + aside) / radius), short),
                 depth,
-                _standing(d),
+                Pose.upright(d.slope),
                 style,
             )
         ]
@@ -172,20 +178,10 @@ def _lid_seams(d: Dimensions, style: MarkStyle) -> Iterator[list[tuple[Mark, Mar
     for seam in range(count):
         angle = d.division.lid_first_cut + seam * 2 * pi / count
         radius = (low + high) / 2 + (seam - (count - 1) / 2) * SEAM_STEP * style.stroke_mm
-        c, s = cos(angle), sin(angle)
         before, after = (
-            Flat(
-                middle=(radius * c - shift * s, radius * s + shift * c, d.lid.thickness_mm),
-                right=(s, -c, 0.0),
-                up=(c, s, 0.0),
-            )
-            for shift in (-off, off)
+            on_top(radius, angle, d.lid.thickness_mm, aside_mm=aside) for aside in (-off, off)
         )
-        yield list(_pair((before, short), (after, short), depth, _standing(d), style))
-
-
-def _standing(d: Dimensions) -> Pose:
-    return Pose(up=(0.0, 0.0, 1.0), slope=d.slope)
+        yield list(_pair((before, short), (after, short), depth, Pose.upright(d.slope), style))
 
 
 def _pair(

@@ -18,6 +18,8 @@ if TYPE_CHECKING:
 
     from gyrecut.proportions.printing import Bed
 
+AS_IT_STANDS = Location((0.0, 0.0, 0.0))
+
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Piece:
